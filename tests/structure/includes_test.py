@@ -1,0 +1,103 @@
+"""Every #include of src and ui obeys tests/structure/include_table.txt."""
+
+import re
+
+import structure
+
+TABLE = "tests/structure/include_table.txt"
+INCLUDE = re.compile(r'^\s*#\s*include\s*([<"])([^>"]+)[>"]', re.MULTILINE)
+
+
+def read_table(root):
+    """Folder to the folders it may include; header (or prefix ending in '/') to the folders that may include it."""
+    folders, headers = {}, {}
+    for line in (root / TABLE).read_text().splitlines():
+        line = line.split("#")[0].strip()
+        if not line:
+            continue
+        name, _, allowed = line.partition(":")
+        if name.startswith("<"):
+            headers[name.strip("<>")] = set(allowed.split())
+        else:
+            folders[name] = set(allowed.split())
+    return folders, headers
+
+
+def table_complaints(folders, headers):
+    """The table itself points down only: a folder may include nothing but folders that stand above its own row."""
+    said, seen = [], set()
+    for folder, allowed in folders.items():
+        said += [f"{TABLE}: {folder} may include {name}, which does not stand above it" for name in sorted(allowed - seen)]
+        seen.add(folder)
+    for header, allowed in headers.items():
+        said += [f"{TABLE}: <{header}> names the unknown folder {name}" for name in sorted(allowed - seen)]
+    return said
+
+
+def own_include_complaint(where, folder, name, folders, files):
+    target = name.split("/")[0] if "/" in name else ""
+    if f"src/{name}" in files:
+        if target not in folders[folder] | {folder, "base"}:
+            allowed = ", ".join(sorted(folders[folder] | {"base"}))
+            return f'{where}: #include "{name}": {folder} may not include {target} (it may: {allowed})'
+        return None
+    if f"ui/{name}" in files:
+        return None if folder == "ui" else f'{where}: #include "{name}": nothing under src may include the window'
+    return f'{where}: #include "{name}": no such header; write it as "folder/name.h" from src'
+
+
+def third_party_complaint(where, folder, name, headers):
+    for header, allowed in headers.items():
+        if (name == header or header.endswith("/") and name.startswith(header)) and folder not in allowed:
+            return f"{where}: #include <{name}>: only {', '.join(sorted(allowed))} may include it"
+    return None
+
+
+def check(root):
+    folders, headers = read_table(root)
+    said = table_complaints(folders, headers)
+    files = set(structure.project_files(root))
+    for path in sorted(files):
+        parts = path.split("/")
+        if parts[0] not in ("src", "ui") or not path.endswith((".h", ".cc")):
+            continue
+        folder = "ui" if parts[0] == "ui" else parts[1]
+        if folder not in folders:
+            said.append(f"{path}: the folder {folder} does not stand in {TABLE}")
+            continue
+        text = (root / path).read_text()
+        for found in INCLUDE.finditer(text):
+            where = f"{path}:{text.count(chr(10), 0, found.start(2)) + 1}"
+            if found.group(1) == '"':
+                complaint = own_include_complaint(where, folder, found.group(2), folders, files)
+            else:
+                complaint = third_party_complaint(where, folder, found.group(2), headers)
+            if complaint:
+                said.append(complaint)
+    return said
+
+
+GOOD_TABLE = "base:\nlattice: # nothing\nstore: lattice\ncli: store\nui: store\n<sqlite3.h>: store\n<CLI/>: cli\n"
+GOOD = {
+    TABLE: GOOD_TABLE,
+    "src/base/text.h": "#include <string>\n",
+    "src/lattice/node.h": '#include "base/text.h"\n',
+    "src/store/file.cc": '#include <sqlite3.h>\n#include "lattice/node.h"\n',
+    "src/cli/main.cc": "#include <CLI/CLI.hpp>\n",
+    "ui/card.h": '#include "lattice/node.h"\n'.replace("lattice/node.h", "base/text.h"),
+}
+BAD = [
+    ({"src/lattice/a.h": '#include "store/b.h"\n', "src/store/b.h": ""}, "lattice may not include store"),
+    ({"src/base/a.h": '\n#include "lattice/node.h"\n'}, "src/base/a.h:2:"),
+    ({"src/cli/a.h": '#include "lattice/node.h"\n'}, "cli may not include lattice"),
+    ({"src/lattice/a.h": "#  include <sqlite3.h>\n"}, "only store may include it"),
+    ({"src/store/a.h": "#include <CLI/App.hpp>\n"}, "only cli may include it"),
+    ({"src/cli/a.cc": '#include "card.h"\n'}, "nothing under src may include the window"),
+    ({"src/cli/a.cc": '#include "missing.h"\n'}, "no such header"),
+    ({"src/attic/a.h": ""}, "does not stand in"),
+    ({TABLE: GOOD_TABLE.replace("lattice: ", "lattice: store ")}, "which does not stand above it"),
+    ({TABLE: GOOD_TABLE.replace("<CLI/>: cli", "<CLI/>: cly")}, "unknown folder cly"),
+]
+
+if __name__ == "__main__":
+    structure.run(check, GOOD, BAD)
