@@ -1,0 +1,20 @@
+// The table of pits (PITS.csv) -> action values. Checks everything that does not depend on the survey's state: columns, words, numbers, times. Every finding is
+// one line: FILE:LINE: COLUMN: 'VALUE' is …; legal: ….
+#ifndef NEARPIT_EXCHANGE_PITS_CSV_H_
+#define NEARPIT_EXCHANGE_PITS_CSV_H_
+
+#include <string>
+#include <string_view>
+#include <vector>
+
+#include "base/status.h"
+#include "record/action.h"
+#include "record/plan.h"
+
+namespace nearpit {
+
+Result<std::vector<Action>> read_pits_csv(std::string_view text, const std::string& file, const Plan& plan);
+
+}  // namespace nearpit
+
+#endif  // NEARPIT_EXCHANGE_PITS_CSV_H_
