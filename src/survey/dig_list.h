@@ -47,6 +47,7 @@ class DigList {
   // Ascending. Cost: the frame's size over 64, plus what is found.
   std::vector<NodeId> due() const;
   std::vector<NodeId> halted() const;
+  std::vector<NodeId> design_positives() const;
   // Design positives next to `id` that opened it, ascending.
   std::vector<NodeId> opened_by(NodeId id) const;
   // Some neighbour of a design positive is kept off by the ring limit. Cost: positives.
