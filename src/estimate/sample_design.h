@@ -37,6 +37,9 @@ struct SampleDesign {
   bool census() const;          // every stratum has n_h = N_h
 };
 
+// The variance, or 0 where pits of one area gave less than 1e-12 mean^2: that is rounding. Any other value, negative ones too, stays.
+double zero_if_rounding(const SampleDesign& design, double mean, double variance);
+
 }  // namespace nearpit
 
 #endif  // NEARPIT_ESTIMATE_SAMPLE_DESIGN_H_
