@@ -76,13 +76,13 @@ void DigList::set_state(NodeId id, PitState state, std::vector<NodeId>* changed)
 
 void DigList::add_closed(NodeId id, ReasonClass reason, int change, std::vector<NodeId>* changed) {
   auto& count = (reason == ReasonClass::kGround ? closed_ground_ : closed_access_)[index(id)];
-  count = static_cast<std::uint8_t>(count + change);
+  count = static_cast<std::uint16_t>(count + change);
   changed->push_back(id);
   refresh(id);
 }
 
 void DigList::add_halt(NodeId id, int change, std::vector<NodeId>* changed) {
-  halts_[index(id)] = static_cast<std::uint8_t>(halts_[index(id)] + change);
+  halts_[index(id)] = static_cast<std::uint16_t>(halts_[index(id)] + change);
   changed->push_back(id);
   refresh(id);
 }

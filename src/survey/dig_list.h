@@ -68,9 +68,9 @@ class DigList {
   const SurveyGround* ground_;
   std::vector<PitState> state_;
   std::vector<std::int32_t> ring_;
-  std::vector<std::uint8_t> closed_ground_;
-  std::vector<std::uint8_t> closed_access_;
-  std::vector<std::uint8_t> halts_;
+  std::vector<std::uint16_t> closed_ground_;
+  std::vector<std::uint16_t> closed_access_;
+  std::vector<std::uint16_t> halts_;
   std::vector<std::uint64_t> due_bits_;
   std::vector<std::uint64_t> halted_bits_;
   std::vector<std::uint64_t> positive_bits_;

@@ -31,14 +31,23 @@ PitEntry entry_of(std::vector<Head> heads, const PositiveRule& rule) {
 Survey::Survey(std::unique_ptr<const SurveyGround> ground) : ground_(std::move(ground)), list_(*ground_) {}
 
 std::vector<NodeId> Survey::set_pit(NodeId id, std::vector<Head> heads) {
-  PitEntry entry = entry_of(std::move(heads), ground_->positive);
   std::vector<NodeId> changed{id};
+  if (heads.empty()) {
+    list_.set_state(id, PitState::kNoRecord, &changed);
+    pits_.erase(id);
+    return changed;
+  }
+  PitEntry entry = entry_of(std::move(heads), ground_->positive);
   list_.set_state(id, state_of(entry.record(), ground_->positive), &changed);
   pits_.insert_or_assign(id, std::move(entry));
   return changed;
 }
 
 void Survey::set_off_grid(const std::string& label, std::vector<Head> heads) {
+  if (heads.empty()) {
+    off_grid_.erase(label);
+    return;
+  }
   off_grid_.insert_or_assign(label, entry_of(std::move(heads), ground_->positive));
 }
 
@@ -55,14 +64,23 @@ std::vector<NodeId> Survey::nodes_in(const ClosedArea& area) const {
   return nodes;
 }
 
-std::vector<NodeId> Survey::set_closed_area(const std::string& object, ClosedArea area) {
+void Survey::mark_closed(const ClosedArea& area, int change, std::vector<NodeId>* changed) {
+  if (area.open_again) return;
+  for (const NodeId id : nodes_in(area)) list_.add_closed(id, class_of(area.reason), change, changed);
+}
+
+std::vector<NodeId> Survey::forget_closed_area(const std::string& object) {
   std::vector<NodeId> changed;
-  const auto mark = [&](const ClosedArea& which, int change) {
-    if (which.open_again) return;
-    for (const NodeId id : nodes_in(which)) list_.add_closed(id, class_of(which.reason), change, &changed);
-  };
-  if (const auto before = closed_.find(object); before != closed_.end()) mark(before->second, -1);
-  mark(area, +1);
+  const auto before = closed_.find(object);
+  if (before == closed_.end()) return changed;
+  mark_closed(before->second, -1, &changed);
+  closed_.erase(before);
+  return changed;
+}
+
+std::vector<NodeId> Survey::set_closed_area(const std::string& object, ClosedArea area) {
+  std::vector<NodeId> changed = forget_closed_area(object);
+  mark_closed(area, +1, &changed);
   closed_.insert_or_assign(object, std::move(area));
   return changed;
 }

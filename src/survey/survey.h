@@ -43,11 +43,13 @@ class Survey {
  public:
   explicit Survey(std::unique_ptr<const SurveyGround> ground);
 
-  // Each replaces what is known of the object and returns the nodes whose standing may have changed.
+  // Each replaces what is known of the object and returns the nodes whose standing may have changed. No heads: as if
+  // nobody had written of the pit (so a refused change can be taken back).
   std::vector<NodeId> set_pit(NodeId id, std::vector<Head> heads);
   void set_off_grid(const std::string& label, std::vector<Head> heads);
   std::vector<NodeId> set_closed_area(const std::string& object, ClosedArea area);
   std::vector<NodeId> set_stop_work(const std::string& object, StopWork stop);
+  std::vector<NodeId> forget_closed_area(const std::string& object);
 
   const SurveyGround& ground() const { return *ground_; }
   const DigList& dig_list() const { return list_; }
@@ -64,6 +66,8 @@ class Survey {
   std::vector<NodeId> asked() const;
 
  private:
+  void mark_closed(const ClosedArea& area, int change, std::vector<NodeId>* changed);
+
   std::unique_ptr<const SurveyGround> ground_;
   DigList list_;
   std::unordered_map<NodeId, PitEntry> pits_;
