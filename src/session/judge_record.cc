@@ -1,0 +1,151 @@
+#include "session/judge_record.h"
+
+#include <algorithm>
+
+#include "base/numbers.h"
+#include "base/text.h"
+
+namespace nearpit {
+namespace {
+
+constexpr double kSamePlace_m = 0.01;
+
+Error bad(std::string line) { return Error(ErrorKind::kBadInput, std::move(line)); }
+
+template <class T>
+void take(const Given<T>& given, std::optional<T>* field) {
+  if (given) *field = *given;
+}
+
+void take(const Given<std::string>& given, std::string* field) {
+  if (given) *field = given->value_or("");
+}
+
+// What stands before: the record that counts, or in a conflict the later head; nothing when there is none or it was withdrawn.
+std::optional<PitRecord> standing(const PitEntry* entry) {
+  if (!entry || entry->withdrawn()) return std::nullopt;
+  return entry->heads[entry->verdict.latest].record;
+}
+
+PitRecord blank(const SurveyModel& model) {
+  PitRecord record;
+  record.counts.assign(model.plan().finds.size(), 0);
+  record.weights_g.assign(model.plan().finds.size(), std::nullopt);
+  return record;
+}
+
+void take_fields(const RecordPit& given, PitRecord* record) {
+  take(given.reason, &record->reason);
+  take(given.crew, &record->crew);
+  take(given.started_at, &record->started_at);
+  take(given.depth_cm, &record->depth_cm);
+  take(given.stop, &record->stop);
+  take(given.moved, &record->moved);
+  take(given.mesh_mm, &record->mesh_mm);
+  take(given.backfilled, &record->backfilled);
+  take(given.bag, &record->bag);
+  take(given.note, &record->note);
+  if (given.chosen_by) record->chosen_by = given.chosen_by->value_or(ChosenBy::kUnsaid);
+  for (const auto& [find, count] : given.counts) record->counts[find] = count.value_or(0);
+  for (const auto& [find, grams] : given.weights_g) record->weights_g[find] = grams;
+}
+
+void take_time(const RecordPit& given, const SurveyModel& model, const WallTime& now, PitRecord* record) {
+  if (given.dug_at) {
+    record->dug_at = given.dug_at->value_or("");
+    record->dug_at_defaulted = false;
+  }
+  if (!record->dug_at.empty()) return;
+  record->dug_at = format_time(in_zone(now, model.zone()));
+  record->dug_at_defaulted = true;
+}
+
+bool any_find(const PitRecord& record) {
+  const bool counted = std::any_of(record.counts.begin(), record.counts.end(), [](auto count) { return count > 0; });
+  const bool weighed = std::any_of(record.weights_g.begin(), record.weights_g.end(), [](auto grams) { return grams > 0.0; });
+  return counted || weighed;
+}
+
+Status settle_place(const SurveyModel& model, const PitName& pit, const RecordPit& given, PitRecord* record) {
+  if (given.x || given.y) {
+    const auto x = given.x.value_or(std::nullopt);
+    const auto y = given.y.value_or(std::nullopt);
+    if (x.has_value() != y.has_value()) return bad(std::string(x ? "y" : "x") + ": missing; x and y go together");
+    record->place = x ? std::optional<Point>(Point{*x, *y}) : std::nullopt;
+  }
+  if (pit.node == kNoNode) {
+    if (!record->place) return bad("x: missing; a pit off the grid needs x and y, metres in the plan's coordinates");
+    return ok_status();
+  }
+  if (!record->place) {
+    if (!record->moved.empty()) return bad("moved: " + quoted(record->moved) + " needs x and y, where the pit was dug");
+    return ok_status();
+  }
+  const double away = distance_m(model.survey().ground().frame.ground(pit.node), *record->place);
+  const double most = model.plan().max_move_m;
+  if (away > most + kSamePlace_m) {
+    return bad("x: " + pit.label + " was dug " + format_trimmed(away, 2) + " m from its place, legal: up to " +
+               format_trimmed(most, 2) + " m; record a judgement pit under a label of its own, or this pit as not_dug");
+  }
+  if (away > kSamePlace_m && record->moved.empty()) {
+    return bad("moved: missing; " + pit.label + " was dug " + format_trimmed(away, 2) +
+               " m from its place, say why (such as 'tree root')");
+  }
+  return ok_status();
+}
+
+// Each status with the fields that go with it.
+Status settle_status(const RecordPit& given, PitRecord* record) {
+  if (record->status == PitStatus::kDug) {
+    if (given.reason && *given.reason) {
+      return bad("reason: " + quoted(word(**given.reason)) + " goes with status not_dug only");
+    }
+    record->reason.reset();
+    if (record->stop == StopReason::kOther && record->note.empty()) {
+      return bad("note: missing; stop 'other' needs a note");
+    }
+    return ok_status();
+  }
+  if (!record->reason) return bad("reason: missing; legal: " + all_not_dug_reasons());
+  if (any_find(*record)) {
+    return bad("status: 'not_dug' but finds are recorded for this pit; clear them with empty cells, or withdraw the record");
+  }
+  if (record->reason == NotDugReason::kOther && record->note.empty()) {
+    return bad("note: missing; reason 'other' needs a note");
+  }
+  record->depth_cm.reset();
+  record->stop.reset();
+  std::fill(record->counts.begin(), record->counts.end(), 0u);
+  std::fill(record->weights_g.begin(), record->weights_g.end(), std::nullopt);
+  return ok_status();
+}
+
+}  // namespace
+
+Result<PitRecord> new_record(const SurveyModel& model, const PitName& pit, const RecordPit& given,
+                             const std::string& why, const WallTime& now) {
+  const PitEntry* entry = model.entry(pit);
+  const auto before = standing(entry);
+  if (entry && entry->verdict.conflict != Conflict::kNone && why.empty()) {
+    return bad("why: missing; " + pit.label + " has " + std::to_string(entry->heads.size()) +
+               " records that disagree, say why this one holds");
+  }
+  PitRecord record = before.value_or(blank(model));
+  if (given.status) record.status = given.status->value_or(PitStatus::kDug);
+  if (record.status == PitStatus::kWithdrawn) {
+    if (!before) return bad("status: 'withdrawn' but " + pit.label + " has no record; legal: dug, not_dug");
+    if (why.empty()) return bad("why: missing; say why the record of " + pit.label + " is withdrawn");
+    return record;
+  }
+  take_fields(given, &record);
+  take_time(given, model, now, &record);
+  if (pit.node == kNoNode && record.chosen_by != ChosenBy::kJudgement) {
+    return bad("pit: " + quoted(pit.label) + " is no pit of the grid; if it was dug off the grid on judgement, say so with " +
+               "chosen_by 'judgement' and x, y; if not, correct the label");
+  }
+  NEARPIT_TRY(settle_place(model, pit, given, &record));
+  NEARPIT_TRY(settle_status(given, &record));
+  return record;
+}
+
+}  // namespace nearpit
