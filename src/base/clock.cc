@@ -193,7 +193,7 @@ Result<TimeZone> TimeZone::named(const std::string& name) {
   try {
     zone.zone_ = date::locate_zone(name);
   } catch (const std::exception&) {
-    return Error(ErrorKind::kNotFound, "time zone " + quoted(name) +
+    return Error(ErrorKind::kNotFound, "time zone " + in_quotes(name) +
                                            " is not in this system's time zone database; write UTC or a name such as "
                                            "America/New_York, or install the database (package tzdata)");
   }
@@ -243,7 +243,7 @@ Result<std::unique_ptr<Clock>> system_clock() {
   const std::optional<WrittenTime> written = read_written(set);
   if (!written || !written->offset_min) {
     return Error(ErrorKind::kBadInput,
-                 "the environment variable NEARPIT_CLOCK is " + quoted(set) +
+                 "the environment variable NEARPIT_CLOCK is " + in_quotes(set) +
                      "; write a time with its offset, such as 2026-05-04T08:00:00-04:00, or unset it");
   }
   return std::unique_ptr<Clock>(std::make_unique<FixedClock>(at_offset(*written, *written->offset_min)));

@@ -13,14 +13,14 @@ namespace nearpit {
 
 // A small closed set; a caller decides by kind, a person reads the lines.
 enum class ErrorKind {
-  kBadInput,   // a plan, table or action that cannot be taken as it is
-  kNotFound,   // a named file or thing that is not there
-  kExists,     // a file that would be overwritten
-  kConflict,   // the survey's present state refuses the change
-  kIo,         // the disk or the operating system refused
-  kDamaged,    // a survey file that is not whole
-  kTooNew,     // a survey file of a later program
-  kInternal,   // our own mistake
+  kBadInput,  // a plan, table or action that cannot be taken as it is
+  kNotFound,  // a named file or thing that is not there
+  kExists,    // a file that would be overwritten
+  kConflict,  // the survey's present state refuses the change
+  kIo,        // the disk or the operating system refused
+  kDamaged,   // a survey file that is not whole
+  kTooNew,    // a survey file of a later program
+  kInternal,  // our own mistake
 };
 
 // At least one line; further lines are further findings of the same input.
@@ -67,15 +67,15 @@ inline Status ok_status() { return Status(Done{}); }
 }  // namespace nearpit
 
 // Hands an error on to the caller; otherwise goes on. `expr` is a Result or Status.
-#define NEARPIT_TRY(expr)                                   \
-  do {                                                      \
-    auto nearpit_try_result = (expr);                       \
+#define NEARPIT_TRY(expr)                                       \
+  do {                                                          \
+    auto nearpit_try_result = (expr);                           \
     if (!nearpit_try_result) return nearpit_try_result.error(); \
   } while (false)
 
 // Hands an error on; otherwise declares `name` with the value.
-#define NEARPIT_ASSIGN(name, expr)                \
-  auto name##_result = (expr);                    \
+#define NEARPIT_ASSIGN(name, expr)                  \
+  auto name##_result = (expr);                      \
   if (!name##_result) return name##_result.error(); \
   auto name = std::move(name##_result).value()
 

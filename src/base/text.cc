@@ -156,7 +156,7 @@ std::string fold_case(std::string_view text) {
   return folded;
 }
 
-std::string quoted(std::string_view text) {
+std::string in_quotes(std::string_view text) {
   constexpr std::size_t kMost = 60;
   std::string out = "\"";
   for (std::size_t count = 0; !text.empty(); ++count) {

@@ -20,7 +20,7 @@ bool is_note(std::string_view text, std::size_t most);
 // Case folded as far as finds' names need it: ASCII, Latin-1, Greek and Cyrillic letters.
 std::string fold_case(std::string_view text);
 // A value as an error line shows it: between double quotes, control characters and stray bytes escaped, cut to 60 code points.
-std::string quoted(std::string_view text);
+std::string in_quotes(std::string_view text);
 // "a, b and c".
 std::string list_in_words(const std::vector<std::string>& words, std::string_view last_joint = "and");
 std::string join(const std::vector<std::string>& words, std::string_view between);

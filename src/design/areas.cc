@@ -24,7 +24,7 @@ Status refuse_overlaps(const Frame& frame, const std::vector<Area>& list) {
       const double common = common_area_m2(list[i].boundary, list[j].boundary);
       const double smaller = std::min(area_m2(list[i].boundary), area_m2(list[j].boundary));
       if (common <= std::min(frame.lattice().cell_area_m2(), 0.001 * smaller)) continue;
-      return Error(ErrorKind::kBadInput, "strata: areas " + quoted(list[i].name) + " and " + quoted(list[j].name) +
+      return Error(ErrorKind::kBadInput, "strata: areas " + in_quotes(list[i].name) + " and " + in_quotes(list[j].name) +
                                              " overlap by " + format_fixed(common, 1) +
                                              " m2; areas must be disjoint, redraw one of them");
     }
@@ -52,7 +52,7 @@ Result<Areas> Areas::assign(const Frame& frame, std::vector<Area> list) {
       ++nodes;
     });
     if (nodes == 0) {
-      return Error(ErrorKind::kBadInput, "strata: area " + quoted(areas.list[i].name) +
+      return Error(ErrorKind::kBadInput, "strata: area " + in_quotes(areas.list[i].name) +
                                              " holds no pit of the lattice; enlarge it or leave it out");
     }
   }

@@ -69,7 +69,7 @@ Result<FirstSample> listed_first_sample(const Areas& areas, const PrimaryUnits& 
   for (std::size_t area = 0; area < drawn.size(); ++area) {
     std::vector<UnitId>& list = drawn[area];
     if (list.empty()) {
-      return Error(ErrorKind::kBadInput, "initial.pits: no listed pit lies in area " + quoted(areas.list[area].name) +
+      return Error(ErrorKind::kBadInput, "initial.pits: no listed pit lies in area " + in_quotes(areas.list[area].name) +
                                              "; list at least one pit in every area");
     }
     std::sort(list.begin(), list.end());
@@ -84,7 +84,7 @@ std::vector<std::string> first_sample_warnings(const Areas& areas, const Primary
   for (std::size_t area = 0; area < areas.list.size(); ++area) {
     const std::size_t drawn = sample.drawn[area].size();
     const std::size_t all = units.count[area];
-    const std::string where = areas.list.size() > 1 ? "area " + quoted(areas.list[area].name) + ": " : "";
+    const std::string where = areas.list.size() > 1 ? "area " + in_quotes(areas.list[area].name) + ": " : "";
     const std::string of_all = std::to_string(drawn) + " of " + std::to_string(all) + " " + unit_word(units.kind, true);
     if (drawn == 1 && all > 1) {
       warnings.push_back(where + "only 1 of " + std::to_string(all) + " " + unit_word(units.kind, true) +

@@ -23,9 +23,13 @@ struct JsonLimits {
 
 struct JsonDocument {
   Json value;
-  std::map<std::string, int> line_of;  // by JSON pointer (RFC 6901); "" is the document; only down to depth 6
-  // The line of the value, or of the nearest value around it that has one.
+  // By JSON pointer (RFC 6901); "" is the document. Only down to depth 6, and only where the line differs from that of the value around.
+  std::map<std::string, int> line_of;
+  std::map<std::string, int> key_line_of;  // of a member's key, where it differs from the member's own line
+  // The line on which the value ends (an object or array: opens), or that of the nearest value around it that has one.
   int line(const std::string& pointer) const;
+  // The line of the member's key.
+  int key_line(const std::string& pointer) const;
 };
 
 // A byte-order mark is accepted. Errors: "FILE:LINE: what; what to do".

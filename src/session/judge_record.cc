@@ -78,7 +78,7 @@ Status settle_place(const SurveyModel& model, const PitName& pit, const RecordPi
     return ok_status();
   }
   if (!record->place) {
-    if (!record->moved.empty()) return bad("moved: " + quoted(record->moved) + " needs x and y, where the pit was dug");
+    if (!record->moved.empty()) return bad("moved: " + in_quotes(record->moved) + " needs x and y, where the pit was dug");
     return ok_status();
   }
   const double away = distance_m(model.survey().ground().frame.ground(pit.node), *record->place);
@@ -98,7 +98,7 @@ Status settle_place(const SurveyModel& model, const PitName& pit, const RecordPi
 Status settle_status(const RecordPit& given, PitRecord* record) {
   if (record->status == PitStatus::kDug) {
     if (given.reason && *given.reason) {
-      return bad("reason: " + quoted(word(**given.reason)) + " goes with status not_dug only");
+      return bad("reason: " + in_quotes(word(**given.reason)) + " goes with status not_dug only");
     }
     record->reason.reset();
     if (record->stop == StopReason::kOther && record->note.empty()) {
@@ -140,7 +140,7 @@ Result<PitRecord> new_record(const SurveyModel& model, const PitName& pit, const
   take_fields(given, &record);
   take_time(given, model, now, &record);
   if (pit.node == kNoNode && record.chosen_by != ChosenBy::kJudgement) {
-    return bad("pit: " + quoted(pit.label) + " is no pit of the grid; if it was dug off the grid on judgement, say so with " +
+    return bad("pit: " + in_quotes(pit.label) + " is no pit of the grid; if it was dug off the grid on judgement, say so with " +
                "chosen_by 'judgement' and x, y; if not, correct the label");
   }
   NEARPIT_TRY(settle_place(model, pit, given, &record));

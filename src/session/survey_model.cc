@@ -54,10 +54,10 @@ Result<PitName> SurveyModel::name_of(std::string_view text) const {
     }
   }
   if (Labels::looks_like_node(text)) {
-    return Error(ErrorKind::kBadInput, quoted(text) + " is no pit of this survey; legal: " + frame_extent(survey_));
+    return Error(ErrorKind::kBadInput, in_quotes(text) + " is no pit of this survey; legal: " + frame_extent(survey_));
   }
   if (!is_name(text, kLongestFreeLabel)) {
-    return Error(ErrorKind::kBadInput, quoted(text) + " can't name a pit; legal: a pit of the grid such as " + label(0) +
+    return Error(ErrorKind::kBadInput, in_quotes(text) + " can't name a pit; legal: a pit of the grid such as " + label(0) +
                                            ", or a free label of 1 to " + std::to_string(kLongestFreeLabel) +
                                            " characters for a judgement pit off the grid");
   }
