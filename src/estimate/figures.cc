@@ -3,10 +3,8 @@
 #include <algorithm>
 #include <array>
 #include <cmath>
-#include <limits>
 #include <utility>
 
-#include "base/clock.h"
 #include "estimate/figure_reasons.h"
 #include "estimate/hansen_hurwitz.h"
 #include "estimate/horvitz_thompson.h"
@@ -174,32 +172,6 @@ std::vector<Estimate> all_rows(const Rows& rows, const std::vector<std::string>&
   return estimates;
 }
 
-// Milliseconds; a time that can't be read comes last.
-std::int64_t dug_when(const Survey& survey, NodeId id) {
-  const auto parsed = parse_time(survey.pit(id)->record().dug_at, TimeZone::utc());
-  return parsed ? parsed->time.utc_ms : std::numeric_limits<std::int64_t>::max();
-}
-
-Cluster cluster_of(const Survey& survey, Network network, std::size_t finds) {
-  const SurveyGround& ground = survey.ground();
-  Cluster cluster;
-  cluster.finds.assign(finds, 0);
-  std::int64_t earliest = 0;
-  for (const NodeId id : network.nodes) {
-    const std::vector<std::uint32_t>& counts = survey.pit(id)->record().counts;
-    for (std::size_t find = 0; find < std::min(finds, counts.size()); ++find)
-      cluster.finds[find] += counts[find];
-    if (ground.sample.holds[static_cast<std::size_t>(id)]) ++cluster.in_first_sample;
-    const std::int64_t when = dug_when(survey, id);
-    if (cluster.label != kNoNode && when >= earliest) continue;
-    cluster.label = id;
-    earliest = when;
-  }
-  cluster.area_m2 = static_cast<double>(network.nodes.size()) * ground.frame.lattice().cell_area_m2();
-  cluster.network = std::move(network);
-  return cluster;
-}
-
 std::optional<std::uint64_t> missed_pits(const Survey& survey, double level) {
   const SurveyGround& ground = survey.ground();
   const DigList& list = survey.dig_list();
@@ -251,9 +223,7 @@ Figures day_figures(const Survey& survey, const FigureSettings& settings) {
   const MetNetworks met = met_networks(survey, networks, finds);
   figures.estimates = all_rows(Rows(survey, settings, figures.progress, met), settings.finds);
   figures.missed_cluster_pits = missed_pits(survey, settings.confidence);
-  figures.clusters.reserve(networks.size());
-  for (Network& network : networks)
-    figures.clusters.push_back(cluster_of(survey, std::move(network), finds));
+  figures.clusters = as_clusters(survey, std::move(networks), finds);
   return figures;
 }
 

@@ -11,7 +11,7 @@
 
 #include "estimate/likely_range.h"
 #include "estimate/sample_design.h"
-#include "survey/networks.h"
+#include "survey/clusters.h"
 #include "survey/progress.h"
 #include "survey/survey.h"
 
@@ -40,15 +40,6 @@ struct Estimate {
   GroundRange ground;                 // of per_m2
   FigureStatus status = FigureStatus::kFinal;
   std::vector<std::string> why;
-};
-
-struct Cluster {
-  NodeId label = kNoNode;                 // its first dug pit: earliest dug_at, then row, then column
-  Network network;
-  std::vector<std::uint64_t> finds;       // by the plan's order
-  std::size_t in_first_sample = 0;
-  double area_m2 = 0;
-  bool closed() const { return network.open.empty(); }
 };
 
 struct FigureSettings {
