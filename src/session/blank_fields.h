@@ -1,0 +1,17 @@
+// Is the record complete? The fields that the plan requires of a finished record (`record.require`) and that are blank.
+#ifndef NEARPIT_SESSION_BLANK_FIELDS_H_
+#define NEARPIT_SESSION_BLANK_FIELDS_H_
+
+#include <vector>
+
+#include "session/survey_model.h"
+#include "store/file_check.h"
+
+namespace nearpit {
+
+// One finding a dug pit with blanks, and one a pit in conflict.
+std::vector<FileProblem> blank_fields(const SurveyModel& model);
+
+}  // namespace nearpit
+
+#endif  // NEARPIT_SESSION_BLANK_FIELDS_H_

@@ -1,0 +1,79 @@
+#include "session/make_survey.h"
+
+#include <filesystem>
+#include <utility>
+
+#include "exchange/boundary_geojson.h"
+#include "exchange/text_file.h"
+#include "position/crs.h"
+#include "record/plan.h"
+#include "session/layer_content.h"
+#include "session/survey_model.h"
+#include "store/survey_file.h"
+
+namespace nearpit {
+namespace {
+
+Error in_plan(const std::string& plan_path, const Error& error) {
+  std::vector<std::string> lines;
+  for (const std::string& line : error.lines) lines.push_back(plan_path + ": " + line);
+  return {error.kind, std::move(lines)};
+}
+
+// The boundary's file lies beside the plan unless its path is absolute.
+Result<MultiPolygon> boundary_from_file(const Plan& plan, const std::string& plan_path) {
+  const std::filesystem::path beside = std::filesystem::path(plan_path).parent_path() / plan.boundary_file;
+  NEARPIT_ASSIGN(text, read_text_file(beside.string()));
+  NEARPIT_ASSIGN(lonlat, read_boundary_geojson(text, beside.string()));
+  NEARPIT_ASSIGN(ground, lonlat_to_ground(lonlat, plan.crs));
+  if (const auto problem = polygon_problem(ground)) {
+    return Error(ErrorKind::kBadInput, beside.string() + ": the boundary " + *problem + "; redraw it");
+  }
+  return ground;
+}
+
+MadeSurvey summary(const SurveyModel& model) {
+  const SurveyGround& ground = model.survey().ground();
+  MadeSurvey made;
+  made.survey = model.plan().survey;
+  made.draw = draw_kind_name(ground.units.kind);
+  made.pits = ground.frame.size();
+  made.first_sample = ground.sample.nodes;
+  made.boundary_m2 = area_m2(model.plan().boundary);
+  made.crs = model.plan().crs;
+  for (std::size_t i = 0; i < ground.areas.list.size(); ++i) {
+    made.areas.push_back({ground.areas.list[i].name, ground.units.count[i], ground.sample.drawn[i].size()});
+  }
+  made.warnings = first_sample_warnings(ground.areas, ground.units, ground.sample);
+  return made;
+}
+
+}  // namespace
+
+Result<MadeSurvey> make_survey(const std::string& plan_path, const std::string& file, Environment& environment) {
+  NEARPIT_ASSIGN(text, read_text_file(plan_path));
+  NEARPIT_ASSIGN(plan, read_plan(text, plan_path));
+  auto crs = crs_facts(plan.crs);
+  if (!crs) return in_plan(plan_path, crs.error());
+  if (!plan.boundary_file.empty()) {
+    auto boundary = boundary_from_file(plan, plan_path);
+    if (!boundary) return boundary.error();
+    plan.boundary = std::move(*boundary);
+    text = with_boundary(text, plan.boundary);
+  }
+  NEARPIT_ASSIGN(ground, make_ground(plan, plan_path, nullptr));
+  FileStart start;
+  start.survey_id = environment.new_id();
+  start.plan = text;
+  start.drawn = ground->sample.drawn;
+  start.epsg = crs->epsg;
+  start.crs_name = crs->name;
+  start.crs_wkt = crs->wkt;
+  start.finds = plan.finds;
+  const SurveyModel model(std::move(plan), std::move(ground));
+  start.made_at = in_zone(environment.clock->now(), model.zone());
+  NEARPIT_TRY(SurveyFile::create(file, start, layer_rows(model)));
+  return summary(model);
+}
+
+}  // namespace nearpit
