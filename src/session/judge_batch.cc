@@ -23,6 +23,10 @@ Status needs_why(const Action& action, const std::string& what) {
 }  // namespace
 
 Status BatchJudge::judge(const std::vector<Action>& actions) {
+  for (const Action& action : actions) {
+    if (const auto* record = std::get_if<RecordPit>(&action.what)) note_known(record->pit);
+    if (const auto* belongs = std::get_if<BelongsTo>(&action.what)) note_known(belongs->other);
+  }
   std::vector<std::string> findings;
   for (const Action& action : actions) {
     const Status done = judge_one(action);
@@ -69,20 +73,25 @@ Status BatchJudge::write_pit(const PitName& pit, const PitRecord& record, const 
   return write(pit.object, pit_record_json(record, pit.label, model_.plan().finds), by, why);
 }
 
+void BatchJudge::note_known(const std::string& text) {
+  const auto pit = model_.name_of(text);
+  if (!pit) return;
+  const PitEntry* entry = model_.entry(*pit);
+  const bool reached = pit->node != kNoNode && model_.survey().dig_list().in_design(pit->node);
+  if (reached || (entry && !entry->withdrawn())) known_before_.insert(pit->object);
+}
+
 void BatchJudge::remember_recorded(const PitName& pit, const std::string& field, ChosenBy chosen_by,
                                    const Origin& origin) {
-  const PitEntry* entry = model_.entry(pit);
-  const bool known = (entry && !entry->withdrawn()) || (pit.node != kNoNode && model_.survey().dig_list().in_design(pit.node));
-  recorded_.push_back({pit, field, chosen_by, known, origin});
+  recorded_.push_back({pit, field, chosen_by, origin});
 }
 
 // A pit must be known before, reached after the whole batch, or said to be judgement or asked for: a mistyped label must not become a judgement pit in silence.
 std::vector<std::string> BatchJudge::not_reached() const {
   std::vector<std::string> findings;
   for (const Recorded& recorded : recorded_) {
-    if (recorded.known_before || recorded.chosen_by == ChosenBy::kJudgement || recorded.chosen_by == ChosenBy::kAsked) {
-      continue;
-    }
+    if (recorded.chosen_by == ChosenBy::kJudgement || recorded.chosen_by == ChosenBy::kAsked) continue;
+    if (known_before_.contains(recorded.pit.object)) continue;
     if (recorded.pit.node != kNoNode && model_.survey().dig_list().in_design(recorded.pit.node)) continue;
     const bool said = recorded.chosen_by == ChosenBy::kDesign;
     findings.push_back(at(recorded.origin) + (said ? "chosen_by: 'design', but " : recorded.field + ": ") +

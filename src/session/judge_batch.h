@@ -35,10 +35,10 @@ class BatchJudge {
     PitName pit;
     std::string field;   // which field of the action names the pit
     ChosenBy chosen_by;
-    bool known_before;   // had a record, or the design reached it before
     Origin origin;
   };
 
+  void note_known(const std::string& text);
   Status judge_one(const Action& action);
   Status carry_out(const RecordPit& given, const Action& action);
   Status carry_out(const WithdrawPit& given, const Action& action);
@@ -62,6 +62,7 @@ class BatchJudge {
   std::map<std::string, std::vector<LogHead>> written_;  // by object, what this batch made of it
   std::set<std::string> touched_;
   std::map<std::string, Origin> first_rows_;             // pits of the tables, to find one that comes twice
+  std::set<std::string> known_before_;                   // pits that had a record or that the design reached before the batch
   std::vector<Recorded> recorded_;
   std::vector<Revision> revisions_;
   std::vector<NodeId> changed_;

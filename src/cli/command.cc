@@ -1,0 +1,31 @@
+#include "cli/command.h"
+
+#include <cstdio>
+
+namespace nearpit::cli {
+
+CLI::Option* add_file(CLI::App* command, std::string* file) {
+  return command->add_option("FILE", *file, "the survey file (.gpkg)")->required()->check([](const std::string& text) {
+    return text.ends_with(".gpkg") ? std::string() : "FILE must end in .gpkg, not '" + text + "'";
+  });
+}
+
+int fail(const Error& error, bool all_errors) {
+  if (all_errors) {
+    for (const std::string& line : error.lines) std::fprintf(stderr, "%s\n", line.c_str());
+  } else {
+    std::fprintf(stderr, "%s\n", error.one_line().c_str());
+  }
+  return kFailed;
+}
+
+int print(const std::string& text) {
+  const bool written = std::fwrite(text.data(), 1, text.size(), stdout) == text.size() && std::fflush(stdout) == 0;
+  return written ? kDone : fail(Error(ErrorKind::kIo, "standard output can't be written"));
+}
+
+int print_json(const Json& json) { return print(json.dump(2) + "\n"); }
+
+void note(const std::string& text) { std::fprintf(stderr, "note: %s\n", text.c_str()); }
+
+}  // namespace nearpit::cli

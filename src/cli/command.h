@@ -1,0 +1,40 @@
+// What every command shares: its place in the argument parser, its way of ending, and its output.
+#ifndef NEARPIT_CLI_COMMAND_H_
+#define NEARPIT_CLI_COMMAND_H_
+
+#include <CLI/CLI.hpp>
+#include <functional>
+#include <string>
+
+#include "base/status.h"
+#include "record/json_text.h"
+
+namespace nearpit::cli {
+
+constexpr int kDone = 0;
+constexpr int kFailed = 1;
+constexpr int kWrongUsage = 2;
+
+// A command adds itself to the program and sets `run` when the arguments name it; main() then runs it.
+using Run = std::function<int()>;
+void add_new(CLI::App& program, Run* run);
+void add_next(CLI::App& program, Run* run);
+void add_log(CLI::App& program, Run* run);
+void add_act(CLI::App& program, Run* run);
+void add_tally(CLI::App& program, Run* run);
+void add_check(CLI::App& program, Run* run);
+
+// A FILE argument: refuses (wrong usage) what does not end in .gpkg.
+CLI::Option* add_file(CLI::App* command, std::string* file);
+
+// One line on standard error ('… and n more'), or all of them; returns kFailed.
+int fail(const Error& error, bool all_errors = false);
+// Everything at once on standard output; a full disk or closed pipe behind it is a failure.
+int print(const std::string& text);
+int print_json(const Json& json);
+// A line that begins "note: ", on standard error.
+void note(const std::string& text);
+
+}  // namespace nearpit::cli
+
+#endif  // NEARPIT_CLI_COMMAND_H_

@@ -1,0 +1,44 @@
+#include <memory>
+
+#include "cli/command.h"
+#include "exchange/pits_csv.h"
+#include "exchange/text_file.h"
+#include "session/session.h"
+
+namespace nearpit::cli {
+namespace {
+
+struct LogOptions {
+  std::string file;
+  std::string table;
+  bool all_errors = false;
+};
+
+int run_log(const LogOptions& options) {
+  auto environment = real_environment();
+  if (!environment) return fail(environment.error());
+  auto session = Session::open(options.file, *environment, false);
+  if (!session) return fail(session.error());
+  const auto text = read_text_file(options.table);
+  if (!text) return fail(text.error());
+  const auto actions = read_pits_csv(*text, options.table, session->model().plan());
+  if (!actions) return fail(actions.error(), options.all_errors);
+  const auto applied = session->apply(*actions);
+  if (!applied) return fail(applied.error(), options.all_errors);
+  for (const std::string& line : applied->notes) note(line);
+  const Progress progress = progress_of(session->model().survey());
+  return print("Saved " + std::to_string(applied->revisions) + " pits; " + std::to_string(progress.due) + " to dig\n");
+}
+
+}  // namespace
+
+void add_log(CLI::App& program, Run* run) {
+  auto options = std::make_shared<LogOptions>();
+  CLI::App* command = program.add_subcommand("log", "record pits from a table, all or nothing");
+  add_file(command, &options->file);
+  command->add_option("PITS", options->table, "the table of pits (CSV)")->required();
+  command->add_flag("--all-errors", options->all_errors, "every finding on a line of its own");
+  command->callback([options, run] { *run = [options] { return run_log(*options); }; });
+}
+
+}  // namespace nearpit::cli

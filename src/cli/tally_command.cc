@@ -1,0 +1,39 @@
+#include <memory>
+
+#include "cli/command.h"
+#include "cli/tally_json.h"
+#include "cli/tally_text.h"
+#include "session/session.h"
+
+namespace nearpit::cli {
+namespace {
+
+struct TallyOptions {
+  std::string file;
+  std::string day;
+  bool json = false;
+};
+
+int run_tally(const TallyOptions& options) {
+  auto environment = real_environment();
+  if (!environment) return fail(environment.error());
+  auto session = Session::open(options.file, *environment, true);
+  if (!session) return fail(session.error());
+  const auto figures = options.day.empty() ? Result<Figures>(session->figures()) : session->figures_of_day(options.day);
+  if (!figures) return fail(figures.error());
+  return options.json ? print_json(tally_json(*figures, session->model()))
+                      : print(tally_text(*figures, session->model(), options.day));
+}
+
+}  // namespace
+
+void add_tally(CLI::App& program, Run* run) {
+  auto options = std::make_shared<TallyOptions>();
+  CLI::App* command = program.add_subcommand("tally", "the day's figures");
+  add_file(command, &options->file);
+  command->add_option("--day", options->day, "only records written up to this day (2026-05-04)");
+  command->add_flag("--json", options->json, "one JSON object");
+  command->callback([options, run] { *run = [options] { return run_tally(*options); }; });
+}
+
+}  // namespace nearpit::cli
