@@ -37,6 +37,12 @@ class Survey:
             raise PlanError("an area has no drawn unit")
         return strata
 
+    def twin(self):
+        """The same survey with records of its own, to try things on."""
+        twin = Survey.__new__(Survey)
+        twin.__dict__.update(self.__dict__, records=self.records.copy())
+        return twin
+
     def log(self, rows, now):
         self.records.log(rows, now)
 
