@@ -30,7 +30,7 @@ std::optional<Node> transect_node(std::string_view text) {
 
 // One half of a grid label: letter and metres.
 std::optional<double> grid_part(std::string_view text, char plus, char minus) {
-  if (text.size() < 2) return std::nullopt;
+  if (text.size() < 2 || text.find_first_of("eE", 1) != std::string_view::npos) return std::nullopt;
   const char letter = lower(text[0]);
   const auto metres = parse_double(text.substr(1));
   if (!metres || *metres < 0 || (letter != plus && letter != minus)) return std::nullopt;
