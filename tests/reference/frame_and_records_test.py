@@ -135,7 +135,7 @@ class Records(unittest.TestCase):
 
     def test_closed_area(self):
         self.log({"pit": "T1-1", "find:flake": "2"})
-        self.survey.act({"action": "close_area", "name": "a", "rows": [2], "reason": "hazard"})
+        self.survey.act({"action": "close_area", "area": "a", "rows": [2], "reason": "hazard"})
         self.log({"pit": "T1-2"})
         self.assertEqual(self.progress("due", "not_dug", "complete"), [0, 1, False])
         self.survey.act({"action": "reopen_area", "area": "a"})

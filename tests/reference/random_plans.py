@@ -42,8 +42,10 @@ def draft_plan(rng):
             "initial": {"draw": rng.choice(["pits", "pits", "transects", "systematic", "listed"]), "seed": rng.randrange(10 ** 6)}}
     if kind == "square" and rng.random() < 0.8:
         plan["neighbours"] = rng.choice([8, 4, "4x2"])
+    elif kind != "square" and rng.random() < 0.3:
+        plan["neighbours"] = 6
     if rng.random() < 0.5:
-        plan["lattice"]["transect_bearing_deg"] = rng.choice([90, 0, 45, 270, round(rng.uniform(0, 360), 1)])
+        plan["lattice"]["transect_bearing_deg"] = rng.choice([90, 0, 45, 270, round(rng.uniform(0, 359.9), 1)])
     if rng.random() < 0.4:
         plan["strata"] = random_areas(rng, ground, width, height)
     add_options(rng, plan)
@@ -138,7 +140,7 @@ def add_draw(rng, plan):
         initial.update({"as": rng.choice(["pits", "transects", "systematic"]), "how": "drawn by lot at the gate", "pits": []})
     if "systematic" in (initial["draw"], initial.get("as")):
         every = rng.randint(2, 3)
-        if rng.random() < 0.3:
+        if initial["draw"] == "systematic" and rng.random() < 0.3:
             initial.update({"interval_m": plan["lattice"].pop("spacing_m") * every})
             initial["between"] = initial["interval_m"] / every
         else:

@@ -212,7 +212,7 @@ class Crew:
 
     def closing(self, survey):
         self.areas_named += 1
-        action = {"action": "close_area", "name": f"shut {self.areas_named}", "reason": self.rng.choice(self.reasons()[:9]),
+        action = {"action": "close_area", "area": f"shut {self.areas_named}", "reason": self.rng.choice(self.reasons()[:9]),
                   "why": "gate shut"}
         if self.rng.random() < 0.5:
             action["rows"] = sorted({self.rng.choice(self.frame.nodes)[0] for _ in range(self.rng.randint(1, 2))})

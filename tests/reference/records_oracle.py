@@ -95,7 +95,7 @@ class Records:
         return record
 
     def act(self, action):
-        """One action; returns nothing. `area` of reopen_area is the closed area's name."""
+        """One action. close_area and reopen_area name their area in `area`."""
         getattr(self, "_" + action["action"])(action)
 
     def _withdraw(self, action):
@@ -107,7 +107,7 @@ class Records:
         self.last[pit] = {"status": "withdrawn"}
 
     def _close_area(self, action):
-        self.closed_areas[action["name"]] = (self.nodes_of_area(action), action["reason"])
+        self.closed_areas[action["area"]] = (self.nodes_of_area(action), action["reason"])
 
     def _reopen_area(self, action):
         del self.closed_areas[action["area"]]
