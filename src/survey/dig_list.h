@@ -37,7 +37,8 @@ class DigList {
   // Only for nodes of the design.
   std::int32_t ring(NodeId id) const { return ring_[index(id)]; }
   bool closed(NodeId id) const { return closed_ground_[index(id)] + closed_access_[index(id)] > 0; }
-  // Halted: in the design, without a record, within a stop-work that is not lifted.
+  // Halted: in the design, without a record, within a stop-work that is not lifted, and not in a closed area (there it counts
+  // as not dug).
   bool halted(NodeId id) const;
   bool due(NodeId id) const;
   // A design node that counts as not dug, by its record or by a closed area; a closed area with an access reason wins over one with

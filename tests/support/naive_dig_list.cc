@@ -90,7 +90,7 @@ Standing DigListOracle::standing(std::size_t node, const std::vector<std::option
   const Fact& fact = facts_[node];
   const bool unrecorded = fact.said == Said::kNothing;
   const bool closed = fact.ground + fact.access > 0;
-  result.halted = unrecorded && fact.halts > 0;
+  result.halted = unrecorded && !closed && fact.halts > 0;
   result.due = unrecorded && !closed && !result.halted;
   result.not_dug_access = fact.said == Said::kAccessReason || (unrecorded && fact.access > 0);
   result.not_dug_ground = fact.said == Said::kGroundReason || (unrecorded && fact.ground > 0 && fact.access == 0);
