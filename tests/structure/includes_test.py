@@ -1,10 +1,13 @@
-"""Every #include of src and ui obeys tests/structure/include_table.txt."""
+"""Every #include of src and ui obeys tests/structure/include_table.txt, and the tests' oracles include nothing that they check."""
 
 import re
 
 import structure
 
 TABLE = "tests/structure/include_table.txt"
+# What an oracle of tests/ may share with the program: where things are, not what follows from them.
+ORACLE = re.compile(r"oracle|^naive_")
+ORACLE_MAY = {"base", "lattice", "design"}
 INCLUDE = re.compile(r'^\s*#\s*include\s*([<"])([^>"]+)[>"]', re.MULTILINE)
 
 
@@ -53,27 +56,43 @@ def third_party_complaint(where, folder, name, headers):
     return None
 
 
+def includes_of(root, path):
+    """(where, quote or bracket, name) of each include of a file."""
+    text = (root / path).read_text()
+    for found in INCLUDE.finditer(text):
+        yield f"{path}:{text.count(chr(10), 0, found.start(2)) + 1}", found.group(1), found.group(2)
+
+
+def source_complaints(root, path, folder, folders, headers, files):
+    if folder not in folders:
+        return [f"{path}: the folder {folder} does not stand in {TABLE}"]
+    said = []
+    for where, mark, name in includes_of(root, path):
+        if mark == '"':
+            said.append(own_include_complaint(where, folder, name, folders, files))
+        else:
+            said.append(third_party_complaint(where, folder, name, headers))
+    return [complaint for complaint in said if complaint]
+
+
+def oracle_complaints(root, path, folders):
+    return [f'{where}: #include "{name}": an oracle includes nothing of what it checks'
+            for where, _, name in includes_of(root, path) if name.split("/")[0] in set(folders) - ORACLE_MAY]
+
+
 def check(root):
     folders, headers = read_table(root)
     said = table_complaints(folders, headers)
     files = set(structure.project_files(root))
     for path in sorted(files):
         parts = path.split("/")
-        if parts[0] not in ("src", "ui") or not path.endswith((".h", ".cc")):
+        if not path.endswith((".h", ".cc")):
             continue
-        folder = "ui" if parts[0] == "ui" else parts[1]
-        if folder not in folders:
-            said.append(f"{path}: the folder {folder} does not stand in {TABLE}")
-            continue
-        text = (root / path).read_text()
-        for found in INCLUDE.finditer(text):
-            where = f"{path}:{text.count(chr(10), 0, found.start(2)) + 1}"
-            if found.group(1) == '"':
-                complaint = own_include_complaint(where, folder, found.group(2), folders, files)
-            else:
-                complaint = third_party_complaint(where, folder, found.group(2), headers)
-            if complaint:
-                said.append(complaint)
+        if parts[0] in ("src", "ui"):
+            folder = "ui" if parts[0] == "ui" else parts[1]
+            said += source_complaints(root, path, folder, folders, headers, files)
+        elif parts[0] == "tests" and ORACLE.search(parts[-1]) and not parts[-1].endswith("_test.cc"):
+            said += oracle_complaints(root, path, folders)
     return said
 
 
@@ -84,7 +103,8 @@ GOOD = {
     "src/lattice/node.h": '#include "base/text.h"\n',
     "src/store/file.cc": '#include <sqlite3.h>\n#include "lattice/node.h"\n',
     "src/cli/main.cc": "#include <CLI/CLI.hpp>\n",
-    "ui/card.h": '#include "lattice/node.h"\n'.replace("lattice/node.h", "base/text.h"),
+    "ui/card.h": '#include "base/text.h"\n',
+    "tests/support/naive_list.cc": '#include "lattice/node.h"\n#include "support/naive_list.h"\n',
 }
 BAD = [
     ({"src/lattice/a.h": '#include "store/b.h"\n', "src/store/b.h": ""}, "lattice may not include store"),
@@ -95,6 +115,8 @@ BAD = [
     ({"src/cli/a.cc": '#include "card.h"\n'}, "nothing under src may include the window"),
     ({"src/cli/a.cc": '#include "missing.h"\n'}, "no such header"),
     ({"src/attic/a.h": ""}, "does not stand in"),
+    ({"tests/support/exact_oracle.cc": '#include "store/b.h"\n'}, "an oracle includes nothing"),
+    ({"tests/support/naive_list.h": '#include "store/b.h"\n'}, "an oracle includes nothing"),
     ({TABLE: GOOD_TABLE.replace("lattice: ", "lattice: store ")}, "which does not stand above it"),
     ({TABLE: GOOD_TABLE.replace("<CLI/>: cli", "<CLI/>: cly")}, "unknown folder cly"),
 ]
