@@ -1,8 +1,8 @@
+#include "cli/act_command.h"
+
 #include <memory>
 
-#include "cli/command.h"
-#include "exchange/text_file.h"
-#include "session/session.h"
+#include "session/take_files.h"
 
 namespace nearpit::cli {
 namespace {
@@ -18,15 +18,12 @@ int run_act(const ActOptions& options) {
   if (!environment) return fail(environment.error());
   auto session = Session::open(options.file, *environment, false);
   if (!session) return fail(session.error());
-  const auto text = read_text_file(options.action);
-  if (!text) return fail(text.error());
-  const auto actions = read_actions(*text, options.action);
-  if (!actions) return fail(actions.error(), options.all_errors);
-  const auto applied = session->apply(*actions);
+  const auto applied = take_actions_file(*session, options.action);
   if (!applied) return fail(applied.error(), options.all_errors);
-  for (const std::string& line : applied->notes) note(line);
+  for (const std::string& line : applied->notes)
+    note(line);
   const Progress progress = progress_of(session->model().survey());
-  return print("Done: " + std::to_string(actions->size()) + (actions->size() == 1 ? " action; " : " actions; ") +
+  return print("Done: " + std::to_string(applied->actions) + (applied->actions == 1 ? " action; " : " actions; ") +
                std::to_string(progress.due) + " pits to dig\n");
 }
 
@@ -34,8 +31,8 @@ int run_act(const ActOptions& options) {
 
 void add_act(CLI::App& program, Run* run) {
   auto options = std::make_shared<ActOptions>();
-  CLI::App* command = program.add_subcommand(
-      "act", "carry out actions: withdraw, belongs_to, ask_neighbours, close_area, reopen_area");
+  CLI::App* command =
+      program.add_subcommand("act", "carry out actions: withdraw, belongs_to, ask_neighbours, close_area, reopen_area");
   add_file(command, &options->file);
   command->add_option("ACTION", options->action, "one action or a list of them (JSON)")->required();
   command->add_flag("--all-errors", options->all_errors, "every finding on a line of its own");

@@ -1,6 +1,7 @@
+#include "cli/check_command.h"
+
 #include <memory>
 
-#include "cli/command.h"
 #include "session/session.h"
 
 namespace nearpit::cli {
@@ -15,7 +16,8 @@ struct CheckOptions {
 Json as_json(const CheckReport& report) {
   Json problems = Json::array();
   for (const FileProblem& problem : report.problems) {
-    problems.push_back({{"kind", problem.kind}, {"where", problem.where}, {"what", problem.what}, {"do", problem.action}});
+    problems.push_back(
+        {{"kind", problem.kind}, {"where", problem.where}, {"what", problem.what}, {"do", problem.action}});
   }
   return {{"whole", report.whole}, {"complete", report.complete}, {"problems", std::move(problems)}};
 }
@@ -33,7 +35,8 @@ int not_opened(const Error& error, const CheckOptions& options) {
   const int code = fail(error);
   if (!options.json || error.kind != ErrorKind::kDamaged) return code;
   CheckReport report;
-  report.problems.push_back({"pages", options.file, error.lines.front(), "keep the file as it is and use a backup copy"});
+  report.problems.push_back(
+      {"pages", options.file, error.lines.front(), "keep the file as it is and use a backup copy"});
   const int printed = print_json(as_json(report));
   return printed == kDone ? code : printed;
 }
@@ -51,9 +54,11 @@ int run_check(const CheckOptions& options) {
   }
   if (!report.whole) return fail(Error(ErrorKind::kDamaged, lines), options.all_errors);
   if (options.json) return kDone;
-  std::string text = "Whole: yes (" + std::to_string(session->revision()) + " revisions, every chain and layer checked)\n";
+  std::string text =
+      "Whole: yes (" + std::to_string(session->revision()) + " revisions, every chain and layer checked)\n";
   text += report.complete ? "Complete: yes\n" : "Complete: no\n";
-  for (const std::string& line : lines) text += "  " + line + "\n";
+  for (const std::string& line : lines)
+    text += "  " + line + "\n";
   return print(text);
 }
 

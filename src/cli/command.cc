@@ -12,7 +12,8 @@ CLI::Option* add_file(CLI::App* command, std::string* file) {
 
 int fail(const Error& error, bool all_errors) {
   if (all_errors) {
-    for (const std::string& line : error.lines) std::fprintf(stderr, "%s\n", line.c_str());
+    for (const std::string& line : error.lines)
+      std::fprintf(stderr, "%s\n", line.c_str());
   } else {
     std::fprintf(stderr, "%s\n", error.one_line().c_str());
   }

@@ -4,10 +4,10 @@
 
 #include <CLI/CLI.hpp>
 #include <functional>
+#include <nlohmann/json.hpp>
 #include <string>
 
 #include "base/status.h"
-#include "record/json_text.h"
 
 namespace nearpit::cli {
 
@@ -17,12 +17,7 @@ constexpr int kWrongUsage = 2;
 
 // A command adds itself to the program and sets `run` when the arguments name it; main() then runs it.
 using Run = std::function<int()>;
-void add_new(CLI::App& program, Run* run);
-void add_next(CLI::App& program, Run* run);
-void add_log(CLI::App& program, Run* run);
-void add_act(CLI::App& program, Run* run);
-void add_tally(CLI::App& program, Run* run);
-void add_check(CLI::App& program, Run* run);
+using Json = nlohmann::ordered_json;
 
 // A FILE argument: refuses (wrong usage) what does not end in .gpkg.
 CLI::Option* add_file(CLI::App* command, std::string* file);

@@ -1,9 +1,8 @@
+#include "cli/log_command.h"
+
 #include <memory>
 
-#include "cli/command.h"
-#include "exchange/pits_csv.h"
-#include "exchange/text_file.h"
-#include "session/session.h"
+#include "session/take_files.h"
 
 namespace nearpit::cli {
 namespace {
@@ -19,13 +18,10 @@ int run_log(const LogOptions& options) {
   if (!environment) return fail(environment.error());
   auto session = Session::open(options.file, *environment, false);
   if (!session) return fail(session.error());
-  const auto text = read_text_file(options.table);
-  if (!text) return fail(text.error());
-  const auto actions = read_pits_csv(*text, options.table, session->model().plan());
-  if (!actions) return fail(actions.error(), options.all_errors);
-  const auto applied = session->apply(*actions);
+  const auto applied = take_pits_table(*session, options.table);
   if (!applied) return fail(applied.error(), options.all_errors);
-  for (const std::string& line : applied->notes) note(line);
+  for (const std::string& line : applied->notes)
+    note(line);
   const Progress progress = progress_of(session->model().survey());
   return print("Saved " + std::to_string(applied->revisions) + " pits; " + std::to_string(progress.due) + " to dig\n");
 }

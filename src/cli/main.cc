@@ -3,7 +3,12 @@
 #include <new>
 #include <string>
 
-#include "cli/command.h"
+#include "cli/act_command.h"
+#include "cli/check_command.h"
+#include "cli/log_command.h"
+#include "cli/new_command.h"
+#include "cli/next_command.h"
+#include "cli/tally_command.h"
 
 namespace {
 

@@ -1,8 +1,9 @@
+#include "cli/new_command.h"
+
 #include <memory>
 
 #include "base/numbers.h"
 #include "base/text.h"
-#include "cli/command.h"
 #include "session/make_survey.h"
 
 namespace nearpit::cli {
@@ -31,7 +32,8 @@ int run_new(const NewOptions& options) {
   if (!environment) return fail(environment.error());
   const auto made = make_survey(options.plan, options.file, *environment);
   if (!made) return fail(made.error(), options.all_errors);
-  for (const std::string& warning : made->warnings) note(warning);
+  for (const std::string& warning : made->warnings)
+    note(warning);
   return print(summary(*made, options.file));
 }
 

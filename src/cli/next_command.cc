@@ -1,9 +1,10 @@
+#include "cli/next_command.h"
+
 #include <memory>
 #include <optional>
 
 #include "base/numbers.h"
 #include "base/text.h"
-#include "cli/command.h"
 #include "session/session.h"
 
 namespace nearpit::cli {
@@ -25,8 +26,10 @@ Result<std::optional<Point>> start_of(const NextOptions& options, const Session&
   const auto y = comma == std::string::npos ? std::nullopt : parse_double(text.substr(comma + 1));
   if (x && y) return std::optional<Point>(Point{*x, *y});
   const auto pit = session.model().name_of(text);
-  if (pit && pit->node != kNoNode) return std::optional<Point>(session.model().survey().ground().frame.ground(pit->node));
-  return Error(ErrorKind::kBadInput, "--from: " + in_quotes(text) + " is no place; legal: X,Y in metres of the plan's "
+  if (pit && pit->node != kNoNode)
+    return std::optional<Point>(session.model().survey().ground().frame.ground(pit->node));
+  return Error(ErrorKind::kBadInput, "--from: " + in_quotes(text) +
+                                         " is no place; legal: X,Y in metres of the plan's "
                                          "coordinates such as 120.5,80, or a pit");
 }
 
@@ -75,15 +78,16 @@ std::string as_text(const DigOrder& order, const SurveyModel& model) {
   if (order.due.empty()) {
     text += "nothing left to dig\n";
   } else {
-    text += std::to_string(order.due.size()) + (order.due.size() == 1 ? " pit" : " pits") + " to dig: " +
-            std::to_string(order.first_sample_left) + " grid, " + std::to_string(order.neighbours_left) +
+    text += std::to_string(order.due.size()) + (order.due.size() == 1 ? " pit" : " pits") +
+            " to dig: " + std::to_string(order.first_sample_left) + " grid, " + std::to_string(order.neighbours_left) +
             " around finds; " + std::to_string(order.open_clusters) + " open " +
             (order.open_clusters == 1 ? "cluster" : "clusters") + "\n";
     text += "Walk, in order (metres and grid bearing from the stop before):\n";
   }
   std::size_t number = 0;
   std::size_t widest = 0;
-  for (const DigStop& stop : order.due) widest = std::max(widest, utf8_length(model.label(stop.node)));
+  for (const DigStop& stop : order.due)
+    widest = std::max(widest, utf8_length(model.label(stop.node)));
   for (const DigStop& stop : order.due) {
     text += padded(std::to_string(++number), 5, true) + "  " + padded(model.label(stop.node), widest, false) +
             padded(format_fixed(stop.distance_m, 1), 8, true) + " m" +

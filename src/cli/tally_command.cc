@@ -1,6 +1,7 @@
+#include "cli/tally_command.h"
+
 #include <memory>
 
-#include "cli/command.h"
 #include "cli/tally_json.h"
 #include "cli/tally_text.h"
 #include "session/session.h"

@@ -48,7 +48,8 @@ Json progress_json(const Progress& progress) {
 
 Json cluster_json(const Cluster& cluster, const SurveyModel& model) {
   Json finds = Json::object();
-  for (std::size_t i = 0; i < cluster.finds.size(); ++i) finds[model.plan().finds[i]] = cluster.finds[i];
+  for (std::size_t i = 0; i < cluster.finds.size(); ++i)
+    finds[model.plan().finds[i]] = cluster.finds[i];
   return {{"label", model.label(cluster.label)},
           {"pits", model.labels_of(cluster.network.nodes)},
           {"finds", std::move(finds)},
@@ -60,27 +61,30 @@ Json cluster_json(const Cluster& cluster, const SurveyModel& model) {
 }
 
 Json estimate_json(const Estimate& estimate) {
-  return {{"of", estimate.of},
-          {"estimator", word(estimate.estimator)},
-          {"mean_per_pit", estimate.mean_per_pit},
-          {"per_m2", or_null(estimate.per_m2)},
-          {"total", estimate.total},
-          {"variance_of_mean", or_null(estimate.variance_of_mean)},
-          {"standard_error", or_null(estimate.standard_error)},
-          {"interval", range_json(estimate.range)},
-          {"ground",
-           {{"standard_error", or_null(estimate.ground.standard_error)}, {"interval", range_json(estimate.ground.range)}}},
-          {"status", word(estimate.status)},
-          {"why", estimate.why}};
+  return {
+      {"of", estimate.of},
+      {"estimator", word(estimate.estimator)},
+      {"mean_per_pit", estimate.mean_per_pit},
+      {"per_m2", or_null(estimate.per_m2)},
+      {"total", estimate.total},
+      {"variance_of_mean", or_null(estimate.variance_of_mean)},
+      {"standard_error", or_null(estimate.standard_error)},
+      {"interval", range_json(estimate.range)},
+      {"ground",
+       {{"standard_error", or_null(estimate.ground.standard_error)}, {"interval", range_json(estimate.ground.range)}}},
+      {"status", word(estimate.status)},
+      {"why", estimate.why}};
 }
 
 }  // namespace
 
 Json tally_json(const Figures& figures, const SurveyModel& model) {
   Json clusters = Json::array();
-  for (const Cluster& cluster : figures.clusters) clusters.push_back(cluster_json(cluster, model));
+  for (const Cluster& cluster : figures.clusters)
+    clusters.push_back(cluster_json(cluster, model));
   Json estimates = Json::array();
-  for (const Estimate& estimate : figures.estimates) estimates.push_back(estimate_json(estimate));
+  for (const Estimate& estimate : figures.estimates)
+    estimates.push_back(estimate_json(estimate));
   return {{"survey", model.plan().survey},
           {"frame", frame_json(model)},
           {"progress", progress_json(figures.progress)},

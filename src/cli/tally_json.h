@@ -2,8 +2,8 @@
 #ifndef NEARPIT_CLI_TALLY_JSON_H_
 #define NEARPIT_CLI_TALLY_JSON_H_
 
+#include "cli/command.h"
 #include "estimate/figures.h"
-#include "record/json_text.h"
 #include "session/survey_model.h"
 
 namespace nearpit::cli {

@@ -23,9 +23,9 @@ std::string progress_text(const Progress& progress) {
   text += "Dug            " + counted(progress.dug, "pit", "pits") + ", " + std::to_string(progress.positive) +
           " positive; " + std::to_string(progress.not_dug) + " not dug\n";
   if (progress.judgement > 0) {
-    text += "Apart          " + counted(progress.judgement, "judgement pit", "judgement pits") +
-            ", in no figure below";
-    if (progress.no_longer_required > 0) text += " (" + std::to_string(progress.no_longer_required) + " no longer required)";
+    text += "Apart          " + counted(progress.judgement, "judgement pit", "judgement pits") + ", in no figure below";
+    if (progress.no_longer_required > 0)
+      text += " (" + std::to_string(progress.no_longer_required) + " no longer required)";
     text += "\n";
   }
   if (progress.withdrawn > 0) text += "Withdrawn      " + counted(progress.withdrawn, "record", "records") + "\n";
@@ -45,8 +45,8 @@ std::string clusters_text(const Figures& figures, const SurveyModel& model) {
     for (std::size_t i = 0; i < cluster.finds.size(); ++i) {
       if (cluster.finds[i] > 0) finds.push_back(model.plan().finds[i] + " " + std::to_string(cluster.finds[i]));
     }
-    text += "  " + model.label(cluster.label) + ": " + counted(cluster.network.nodes.size(), "pit", "pits") + ", about " +
-            figure(cluster.area_m2) + " m2; " + join(finds, ", ");
+    text += "  " + model.label(cluster.label) + ": " + counted(cluster.network.nodes.size(), "pit", "pits") +
+            ", about " + figure(cluster.area_m2) + " m2; " + join(finds, ", ");
     const std::size_t open = cluster.network.open.size();
     text += cluster.closed() ? "; closed" : "; open, " + counted(open, "pit", "pits") + " to dig around it";
     if (cluster.network.cut_at_edge) text += "; cut at the block edge";
@@ -95,24 +95,35 @@ std::string row_text(const Estimate& estimate, const SurveyModel& model) {
     text += figure(estimate.total) + " of " + std::to_string(ground.frame.size()) + " possible pits" +
             range_text(estimate.range, ground.frame.size());
   }
-  return text + "  [" + std::string(word(estimate.status)) + "]\n";
+  return text + "; " + std::string(word(estimate.status));
 }
 
-// Reasons that every row of the list shares are said once.
-std::vector<std::string> shared_reasons(const std::vector<Estimate>& estimates) {
-  std::vector<std::string> shared;
-  if (estimates.empty()) return shared;
-  for (const std::string& reason : estimates.front().why) {
-    const bool everywhere = std::all_of(estimates.begin(), estimates.end(), [&](const Estimate& estimate) {
-      return !estimate.per_m2 || std::find(estimate.why.begin(), estimate.why.end(), reason) != estimate.why.end();
-    });
-    if (everywhere) shared.push_back(reason);
+// Each reason is said once, under the number that rows refer to.
+class Footnotes {
+ public:
+  std::string marks(const std::vector<std::string>& reasons) {
+    std::vector<std::string> numbers;
+    for (const std::string& reason : reasons) {
+      const auto known = std::find(notes_.begin(), notes_.end(), reason);
+      numbers.push_back(std::to_string(known - notes_.begin() + 1));
+      if (known == notes_.end()) notes_.push_back(reason);
+    }
+    return numbers.empty() ? "" : " (" + join(numbers, ", ") + ")";
   }
-  return shared;
-}
+
+  std::string text() const {
+    std::string text;
+    for (std::size_t i = 0; i < notes_.size(); ++i)
+      text += "  (" + std::to_string(i + 1) + ") " + notes_[i] + "\n";
+    return notes_.empty() ? "" : "\nNotes\n" + text;
+  }
+
+ private:
+  std::vector<std::string> notes_;
+};
 
 std::string estimates_text(const Figures& figures, const SurveyModel& model) {
-  const std::vector<std::string> shared = shared_reasons(figures.estimates);
+  Footnotes notes;
   std::string text = "\nFigures\n";
   std::string of;
   for (const Estimate& estimate : figures.estimates) {
@@ -120,14 +131,9 @@ std::string estimates_text(const Figures& figures, const SurveyModel& model) {
       of = estimate.of;
       text += "  " + (of == "target" ? "target finds" : of) + "\n";
     }
-    text += row_text(estimate, model);
-    for (const std::string& reason : estimate.why) {
-      if (std::find(shared.begin(), shared.end(), reason) == shared.end()) text += "        " + reason + "\n";
-    }
+    text += row_text(estimate, model) + notes.marks(estimate.why) + "\n";
   }
-  if (!shared.empty()) text += "\nAll figures\n";
-  for (const std::string& reason : shared) text += "  " + reason + "\n";
-  return text;
+  return text + notes.text();
 }
 
 }  // namespace

@@ -18,14 +18,15 @@ Status refuse_overlaps(const Frame& frame, const std::vector<Area>& list) {
     const Box box = bounding_box(list[i].boundary);
     for (std::size_t j = i + 1; j < list.size(); ++j) {
       const Box other = bounding_box(list[j].boundary);
-      if (box.high.x < other.low.x || other.high.x < box.low.x || box.high.y < other.low.y || other.high.y < box.low.y) {
+      if (box.high.x < other.low.x || other.high.x < box.low.x || box.high.y < other.low.y ||
+          other.high.y < box.low.y) {
         continue;
       }
       const double common = common_area_m2(list[i].boundary, list[j].boundary);
       const double smaller = std::min(area_m2(list[i].boundary), area_m2(list[j].boundary));
       if (common <= std::min(frame.lattice().cell_area_m2(), 0.001 * smaller)) continue;
-      return Error(ErrorKind::kBadInput, "strata: areas " + in_quotes(list[i].name) + " and " + in_quotes(list[j].name) +
-                                             " overlap by " + format_fixed(common, 1) +
+      return Error(ErrorKind::kBadInput, "strata: areas " + in_quotes(list[i].name) + " and " +
+                                             in_quotes(list[j].name) + " overlap by " + format_fixed(common, 1) +
                                              " m2; areas must be disjoint, redraw one of them");
     }
   }
@@ -63,7 +64,8 @@ Result<Areas> Areas::assign(const Frame& frame, std::vector<Area> list) {
     const auto more = std::count(outside, areas.of_node.end(), kNone) - 1;
     return Error(ErrorKind::kBadInput,
                  "strata: pit " + transect_label(frame.node(id)) + " at " + format_trimmed(place.x, 3) + ", " +
-                     format_trimmed(place.y, 3) + (more > 0 ? " and " + std::to_string(more) + " others lie" : " lies") +
+                     format_trimmed(place.y, 3) +
+                     (more > 0 ? " and " + std::to_string(more) + " others lie" : " lies") +
                      " inside the boundary but in no area; the areas must cover every pit of the boundary");
   }
   return areas;

@@ -30,7 +30,8 @@ FirstSample FirstSample::from_units(const Areas& areas, const PrimaryUnits& unit
   std::vector<std::vector<bool>> is_drawn(areas.list.size());
   for (std::size_t area = 0; area < areas.list.size(); ++area) {
     is_drawn[area].assign(units.count[area], false);
-    for (const UnitId unit : sample.drawn[area]) is_drawn[area][unit] = true;
+    for (const UnitId unit : sample.drawn[area])
+      is_drawn[area][unit] = true;
   }
   sample.holds.assign(areas.of_node.size(), false);
   for (std::size_t i = 0; i < areas.of_node.size(); ++i) {
@@ -69,7 +70,8 @@ Result<FirstSample> listed_first_sample(const Areas& areas, const PrimaryUnits& 
   for (std::size_t area = 0; area < drawn.size(); ++area) {
     std::vector<UnitId>& list = drawn[area];
     if (list.empty()) {
-      return Error(ErrorKind::kBadInput, "initial.pits: no listed pit lies in area " + in_quotes(areas.list[area].name) +
+      return Error(ErrorKind::kBadInput, "initial.pits: no listed pit lies in area " +
+                                             in_quotes(areas.list[area].name) +
                                              "; list at least one pit in every area");
     }
     std::sort(list.begin(), list.end());

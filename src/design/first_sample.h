@@ -16,8 +16,7 @@ struct FirstSample {
   std::vector<bool> holds;                 // by NodeId: the node lies in a drawn unit
   NodeId nodes = 0;                        // how many do
 
-  static FirstSample from_units(const Areas& areas, const PrimaryUnits& units,
-                                std::vector<std::vector<UnitId>> drawn);
+  static FirstSample from_units(const Areas& areas, const PrimaryUnits& units, std::vector<std::vector<UnitId>> drawn);
 };
 
 // count[h] units of area h; areas in order share one stream of the seed. Error: count outside 1 .. N_h, naming the area.

@@ -17,7 +17,8 @@ Start sub_lattice_start(const Lattice& lattice, const Node& node, std::int32_t k
 }
 
 void number_pits(const Areas& areas, PrimaryUnits* units) {
-  for (std::size_t i = 0; i < areas.of_node.size(); ++i) units->of_node[i] = units->count[areas.of_node[i]]++;
+  for (std::size_t i = 0; i < areas.of_node.size(); ++i)
+    units->of_node[i] = units->count[areas.of_node[i]]++;
 }
 
 void number_transects(const Frame& frame, const Areas& areas, PrimaryUnits* units) {
@@ -41,12 +42,12 @@ void number_sub_lattices(const Frame& frame, const Areas& areas, PrimaryUnits* u
         sub_lattice_start(frame.lattice(), frame.node(id), units->every), 0);
   }
   for (std::size_t area = 0; area < starts.size(); ++area) {
-    for (auto& [start, unit] : starts[area]) unit = units->count[area]++;
+    for (auto& [start, unit] : starts[area])
+      unit = units->count[area]++;
   }
   for (NodeId id = 0; id < frame.size(); ++id) {
     const auto at = static_cast<std::size_t>(id);
-    units->of_node[at] =
-        starts[areas.of_node[at]].at(sub_lattice_start(frame.lattice(), frame.node(id), units->every));
+    units->of_node[at] = starts[areas.of_node[at]].at(sub_lattice_start(frame.lattice(), frame.node(id), units->every));
   }
 }
 

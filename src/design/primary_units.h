@@ -21,13 +21,14 @@ namespace nearpit {
 enum class DrawKind { kPits, kTransects, kSystematic };
 std::string_view draw_kind_name(DrawKind kind);
 
-using UnitId = std::uint32_t;  // 0 .. N_h - 1 within its area, in the order of its first node (systematic: by q start, then p start)
+using UnitId = std::
+    uint32_t;  // 0 .. N_h - 1 within its area, in the order of its first node (systematic: by q start, then p start)
 
 struct PrimaryUnits {
   DrawKind kind = DrawKind::kPits;
-  std::int32_t every = 1;                // systematic only, k >= 2
-  std::vector<UnitId> of_node;           // by NodeId, number within the node's area
-  std::vector<std::uint32_t> count;      // N_h by AreaId
+  std::int32_t every = 1;            // systematic only, k >= 2
+  std::vector<UnitId> of_node;       // by NodeId, number within the node's area
+  std::vector<std::uint32_t> count;  // N_h by AreaId
 
   static PrimaryUnits of(const Frame& frame, const Areas& areas, DrawKind kind, std::int32_t every);
 };

@@ -48,7 +48,8 @@ MultiPolygon cells_outline(const Lattice& lattice, const std::vector<Node>& node
   MultiPolygon outline;
   for (const BoostPolygon& polygon : united(lattice, nodes)) {
     Polygon out{ring_of(polygon.outer()), {}};
-    for (const auto& hole : polygon.inners()) out.holes.push_back(ring_of(hole));
+    for (const auto& hole : polygon.inners())
+      out.holes.push_back(ring_of(hole));
     outline.push_back(std::move(out));
   }
   return outline;

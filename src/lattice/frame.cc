@@ -33,7 +33,8 @@ std::vector<Edge> edges_of(const Lattice& lattice, const MultiPolygon& polygons)
   };
   for (std::size_t i = 0; i < polygons.size(); ++i) {
     add_ring(polygons[i].outer, i);
-    for (const Ring& hole : polygons[i].holes) add_ring(hole, i);
+    for (const Ring& hole : polygons[i].holes)
+      add_ring(hole, i);
   }
   return edges;
 }
@@ -88,7 +89,8 @@ void add_row(const Lattice& lattice, std::int32_t row, RowMeets& meets, std::vec
   for (std::size_t i = 0; i + 1 < meets.crossings.size(); i += 2) {
     add_columns(lattice, row, {meets.crossings[i].second, meets.crossings[i + 1].second}, &runs);
   }
-  for (const Interval& stretch : meets.near_edges) add_columns(lattice, row, stretch, &runs);
+  for (const Interval& stretch : meets.near_edges)
+    add_columns(lattice, row, stretch, &runs);
   std::sort(runs.begin(), runs.end(), [](const Run& a, const Run& b) { return a.first < b.first; });
   for (const Run& run : runs) {
     if (!out->empty() && out->back().row == row && run.first <= out->back().last + 1) {
@@ -169,8 +171,8 @@ Result<Frame> Frame::clip(const Lattice& lattice, const MultiPolygon& boundary) 
   const Box box = bounding_box(boundary);
   const double across = std::hypot(box.high.x - box.low.x, box.high.y - box.low.y);
   if (area_m2(boundary) / lattice.cell_area_m2() > 1.01 * kMostNodes || across / lattice.row_distance_m() > kMostRows) {
-    return Error(ErrorKind::kBadInput, "lattice.spacing_m: " + format_double(lattice.spacing_m) +
-                                           " gives more than " + std::to_string(kMostNodes) +
+    return Error(ErrorKind::kBadInput, "lattice.spacing_m: " + format_double(lattice.spacing_m) + " gives more than " +
+                                           std::to_string(kMostNodes) +
                                            " pits inside the boundary; use a larger spacing or a smaller boundary");
   }
   Frame frame;
@@ -192,14 +194,16 @@ Result<Frame> Frame::clip(const Lattice& lattice, const MultiPolygon& boundary) 
   frame.first_row_ = frame.runs_.front().row;
   const std::int32_t last_row = frame.runs_.back().row;
   frame.row_starts_.assign(static_cast<std::size_t>(last_row - frame.first_row_) + 2, 0);
-  for (const Run& run : frame.runs_) ++frame.row_starts_[static_cast<std::size_t>(run.row - frame.first_row_) + 1];
-  for (std::size_t i = 1; i < frame.row_starts_.size(); ++i) frame.row_starts_[i] += frame.row_starts_[i - 1];
+  for (const Run& run : frame.runs_)
+    ++frame.row_starts_[static_cast<std::size_t>(run.row - frame.first_row_) + 1];
+  for (std::size_t i = 1; i < frame.row_starts_.size(); ++i)
+    frame.row_starts_[i] += frame.row_starts_[i - 1];
   return frame;
 }
 
 Node Frame::node(NodeId id) const {
-  const auto after =
-      std::upper_bound(runs_.begin(), runs_.end(), id, [](NodeId wanted, const Run& run) { return wanted < run.start; });
+  const auto after = std::upper_bound(runs_.begin(), runs_.end(), id,
+                                      [](NodeId wanted, const Run& run) { return wanted < run.start; });
   const Run& run = *(after - 1);
   return {run.row, run.first + (id - run.start)};
 }

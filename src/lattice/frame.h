@@ -87,7 +87,8 @@ class Frame {
 
 // The origin that the plan leaves open: the lower-left corner of the boundary's bounding box in turned axes; `shift` (each
 // 0 <= part < 1) moves it by that part of one cell, so that still no node of the frame has a row or column below 1.
-Point default_origin(const Lattice& lattice, const MultiPolygon& boundary, double shift_along = 0, double shift_across = 0);
+Point default_origin(const Lattice& lattice, const MultiPolygon& boundary, double shift_along = 0,
+                     double shift_across = 0);
 
 }  // namespace nearpit
 

@@ -45,7 +45,8 @@ std::optional<GridPlace> grid_place(std::string_view text) {
   const std::size_t second = text.find_first_of("eEwW");
   if (second == std::string_view::npos) return std::nullopt;
   std::string_view first = text.substr(0, second);
-  while (!first.empty() && first.back() == ' ') first.remove_suffix(1);
+  while (!first.empty() && first.back() == ' ')
+    first.remove_suffix(1);
   const auto north = grid_part(first, 'n', 's');
   const auto east = grid_part(text.substr(second), 'e', 'w');
   if (!north || !east) return std::nullopt;

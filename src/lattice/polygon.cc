@@ -25,10 +25,12 @@ BoostMulti converted(const MultiPolygon& polygons, const Point& zero) {
   BoostMulti multi;
   for (const Polygon& polygon : polygons) {
     BoostPolygon out;
-    for (const Point& point : polygon.outer) out.outer().emplace_back(point.x - zero.x, point.y - zero.y);
+    for (const Point& point : polygon.outer)
+      out.outer().emplace_back(point.x - zero.x, point.y - zero.y);
     for (const Ring& hole : polygon.holes) {
       out.inners().emplace_back();
-      for (const Point& point : hole) out.inners().back().emplace_back(point.x - zero.x, point.y - zero.y);
+      for (const Point& point : hole)
+        out.inners().back().emplace_back(point.x - zero.x, point.y - zero.y);
     }
     multi.push_back(std::move(out));
   }

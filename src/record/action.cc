@@ -28,7 +28,7 @@ std::vector<std::int32_t> rows_of(const Fields& action, const Json& value) {
   std::vector<std::int32_t> rows;
   const std::string legal = "a list of 1 to 100000 row numbers";
   if (!value.is_array() || value.empty() || value.size() > 100'000) {
-    action.findings()->add(action.at("rows"), shown(value) + " is not such a list; legal: " + legal);
+    action.findings()->add(action.at("rows"), shown(value) + " is no list of rows; legal: " + legal);
     return rows;
   }
   for (std::size_t i = 0; i < value.size(); ++i) {
@@ -65,6 +65,7 @@ CloseArea close_area(const Fields& action, bool* why_needed) {
   CloseArea close;
   close.name = action.name("area", Need::kOptional, kLongestName).value_or("");
   read_ground_to_close(action, &close);
+  *why_needed = false;
   const std::string legal = "one of " + all_not_dug_reasons();
   const Json* reason = action.take("reason", Need::kRequired, legal);
   if (reason == nullptr) return close;

@@ -17,10 +17,10 @@
 
 namespace nearpit {
 
-// Where an action came from, for error lines: "PITS.csv:7" or "ACTION.json:3".
+// Where an action came from, for error lines. Both empty when it came from no file.
 struct Origin {
-  std::string place;
-  int line = 0;
+  std::string place;  // "PITS.csv:7", "ACTION.json:3"
+  int line = 0;       // the 7 or 3
 };
 
 // A field that was given: a value, or empty to clear it. A field not given keeps its value (new records: its default).

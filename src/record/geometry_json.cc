@@ -31,12 +31,12 @@ std::string child(const std::string& field, std::size_t index) { return field + 
 
 std::optional<double> coordinate(const Json& value, const std::string& field, Faults* faults) {
   if (!value.is_number()) {
-    faults->add(field, shown(value) + " is not a number; legal: a number from -1e8 to 1e8");
+    faults->add(field, shown(value) + " is not a number; legal: a number from -100000000 to 100000000");
     return std::nullopt;
   }
   const auto number = value.get<double>();
   if (std::isfinite(number) && std::abs(number) <= kLargest) return number;
-  faults->add(field, shown(value) + " is too large; legal: a number from -1e8 to 1e8");
+  faults->add(field, shown(value) + " is too large; legal: a number from -100000000 to 100000000");
   return std::nullopt;
 }
 

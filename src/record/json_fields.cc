@@ -28,8 +28,8 @@ std::size_t edit_distance(std::string_view from, std::string_view to) {
   return row.back();
 }
 
-// "did you mean "spacing_m"? " or nothing.
-std::string nearest_word(const std::string& word, std::span<const std::string_view> words) {
+// The word that was meant; empty when none is near.
+std::string_view nearest_word(const std::string& word, std::span<const std::string_view> words) {
   if (word.size() > 60 || words.empty()) return "";
   std::size_t least = std::max<std::size_t>(2, word.size() / 3) + 1;
   std::string_view best;
@@ -41,7 +41,7 @@ std::string nearest_word(const std::string& word, std::span<const std::string_vi
       best = candidate;
     }
   }
-  return best.empty() ? "" : "did you mean " + in_quotes(best) + "? ";
+  return best;
 }
 
 std::string characters(std::size_t most) { return "1 to " + std::to_string(most) + " characters"; }
@@ -51,6 +51,20 @@ std::string name_legal(std::size_t most) {
 std::string note_legal(std::size_t most) { return "a text of " + characters(most); }
 std::string whole_legal(std::int64_t low, std::int64_t high) {
   return "a whole number from " + std::to_string(low) + " to " + std::to_string(high);
+}
+
+// What keeps a value from being a text of 1 to `most` characters.
+std::string text_problem(const Json& value, std::size_t most) {
+  if (!value.is_string()) return " is not a text";
+  const auto& text = value.get_ref<const std::string&>();
+  if (text.find_first_not_of(" \n") == std::string::npos) return " is empty";
+  if (utf8_length(text) > most) return " is too long";
+  if (is_name(text, most) && (text.front() == ' ' || text.back() == ' ')) return " begins or ends with a space";
+  return " holds a character that may not stand here";
+}
+
+std::string list_problem(const Json& value, std::size_t least) {
+  return !value.is_array() ? " is not a list" : value.size() < least ? " is too short" : " is too long";
 }
 
 std::optional<std::int64_t> whole_number(const Json& value) {
@@ -149,9 +163,10 @@ bool NumberRange::holds(double value) const {
 }
 
 std::string NumberRange::in_words() const {
-  const std::string from = above_low ? "above " + format_double(low) : "from " + format_double(low);
+  const auto written = [](double end) { return format_significant(end, 12); };
+  const std::string from = (above_low ? "above " : "from ") + written(low);
   const std::string to = below_high ? "to below " : above_low ? "and up to " : "to ";
-  return "a number " + from + " " + to + format_double(high);
+  return "a number " + from + " " + to + written(high);
 }
 
 std::optional<double> number_of(Findings* findings, const Json& value, const std::string& pointer,
@@ -178,7 +193,7 @@ std::optional<std::string> name_of(Findings* findings, const Json& value, const 
     const auto& text = value.get_ref<const std::string&>();
     if (is_name(text, most) && text.front() != ' ' && text.back() != ' ') return text;
   }
-  findings->add(pointer, shown(value) + " is no such text; legal: " + name_legal(most));
+  findings->add(pointer, shown(value) + text_problem(value, most) + "; legal: " + name_legal(most));
   return std::nullopt;
 }
 
@@ -207,8 +222,8 @@ std::vector<std::string> names_of(Findings* findings, const Json& value, const s
                                   std::size_t most, std::size_t longest, bool fold) {
   std::vector<std::string> names;
   if (!value.is_array() || value.size() < least || value.size() > most) {
-    findings->add(pointer, shown(value) + " is not such a list; legal: a list of " + std::to_string(least) + " to " +
-                               std::to_string(most) + " texts");
+    findings->add(pointer, shown(value) + list_problem(value, least) + "; legal: a list of " + std::to_string(least) +
+                               " to " + std::to_string(most) + " texts");
     return names;
   }
   std::set<std::string> seen;
@@ -244,13 +259,16 @@ Fields::Fields(Findings* findings, const Json& value, std::string pointer, std::
   check_keys(keys);
 }
 
-void Fields::check_keys(std::span<const std::string_view> keys) const {
+void Fields::check_keys(std::span<const std::string_view> keys) {
   constexpr std::size_t kMostNamed = 20;
   std::size_t named = 0;
   for (const auto& [key, value] : object_->items()) {
     if (std::find(keys.begin(), keys.end(), key) != keys.end()) continue;
     if (++named > kMostNamed) return;
-    findings_->add_at_key(at(key), "this key is unknown; " + nearest_word(key, keys) + "legal: " + quoted_list(keys));
+    const std::string_view meant = nearest_word(key, keys);
+    if (!meant.empty()) meant_.push_back(meant);
+    const std::string hint = meant.empty() ? "" : "did you mean " + in_quotes(meant) + "? ";
+    findings_->add_at_key(at(key), "this key is unknown; " + hint + "legal: " + quoted_list(keys));
   }
 }
 
@@ -262,7 +280,10 @@ const Json* Fields::find(std::string_view key) const {
 
 const Json* Fields::take(std::string_view key, Need need, const std::string& legal) const {
   const Json* value = find(key);
-  if (value == nullptr && need == Need::kRequired && object_ != nullptr) findings_->add_missing(pointer_, key, legal);
+  const bool misspelt = std::find(meant_.begin(), meant_.end(), key) != meant_.end();
+  if (value == nullptr && need == Need::kRequired && object_ != nullptr && !misspelt) {
+    findings_->add_missing(pointer_, key, legal);
+  }
   return value;
 }
 
@@ -285,7 +306,7 @@ std::optional<std::string> Fields::note(std::string_view key, Need need, std::si
   const Json* value = take(key, need, note_legal(most));
   if (value == nullptr) return std::nullopt;
   if (value->is_string() && is_note(value->get_ref<const std::string&>(), most)) return value->get<std::string>();
-  findings_->add(at(key), shown(*value) + " is no such text; legal: " + note_legal(most));
+  findings_->add(at(key), shown(*value) + text_problem(*value, most) + "; legal: " + note_legal(most));
   return std::nullopt;
 }
 

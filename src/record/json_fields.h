@@ -108,11 +108,12 @@ class Fields {
   void refuse(std::string_view key, const std::string& why) const;
 
  private:
-  void check_keys(std::span<const std::string_view> keys) const;
+  void check_keys(std::span<const std::string_view> keys);
 
   Findings* findings_;
   const Json* object_;  // null when the value is none
   std::string pointer_;
+  std::vector<std::string_view> meant_;  // keys that an unknown one was meant to be: not called missing too
 };
 
 }  // namespace nearpit

@@ -15,11 +15,11 @@
 namespace nearpit {
 namespace {
 
-// The lines of an error of the ground, each led by the file and the plan's field.
-Error in_field(const std::string& file, const std::string& field, const Error& error) {
+// The lines of an error of the ground, which begin with the plan's field, each led by the file.
+Error in_file(const std::string& file, const Error& error) {
   std::vector<std::string> lines;
   for (const std::string& line : error.lines)
-    lines.push_back(file + ": " + field + ": " + line);
+    lines.push_back(file + ": " + line);
   return {error.kind, std::move(lines)};
 }
 
@@ -114,11 +114,11 @@ Result<FirstSample> first_sample(const Plan& plan, const std::string& file, cons
   if (plan.initial.listed) {
     NEARPIT_ASSIGN(nodes, listed_nodes(plan, file, ground.frame));
     auto sample = listed_first_sample(ground.areas, ground.units, nodes);
-    if (!sample) return in_field(file, "initial.pits", sample.error());
+    if (!sample) return in_file(file, sample.error());
     return sample;
   }
   auto sample = draw_first_sample(ground.areas, ground.units, counts_of(plan, ground.areas), plan.initial.seed);
-  if (!sample) return in_field(file, "initial.count", sample.error());
+  if (!sample) return in_file(file, sample.error());
   return sample;
 }
 
@@ -142,10 +142,10 @@ Result<std::unique_ptr<SurveyGround>> make_ground(const Plan& plan, const std::s
   if (plan.boundary.empty()) return Error(ErrorKind::kInternal, file + ": boundary: not read yet");
   auto ground = std::make_unique<SurveyGround>();
   auto frame = Frame::clip(lattice_of(plan), plan.boundary);
-  if (!frame) return in_field(file, plan.origin ? "lattice.origin" : "boundary", frame.error());
+  if (!frame) return in_file(file, frame.error());
   ground->frame = std::move(frame).value();
   auto areas = Areas::assign(ground->frame, areas_of(plan));
-  if (!areas) return in_field(file, "strata", areas.error());
+  if (!areas) return in_file(file, areas.error());
   ground->areas = std::move(areas).value();
   ground->units = PrimaryUnits::of(ground->frame, ground->areas, plan.initial.draw, plan.initial.every);
   auto sample = first_sample(plan, file, *ground, drawn);

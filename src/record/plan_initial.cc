@@ -45,7 +45,8 @@ void read_listed_pits(const Fields& initial, Plan* out) {
   const Json* pits = initial.take("pits", Need::kRequired, legal);
   if (pits == nullptr) return;
   if (!pits->is_array() || pits->empty()) {
-    return initial.findings()->add(initial.at("pits"), shown(*pits) + " is not such a list; legal: " + legal);
+    const std::string wrong = pits->is_array() ? " is empty; legal: " : " is not a list; legal: ";
+    return initial.findings()->add(initial.at("pits"), shown(*pits) + wrong + legal);
   }
   for (std::size_t i = 0; i < pits->size(); ++i) {
     const auto label = name_of(initial.findings(), (*pits)[i], child_pointer(initial.at("pits"), i), 60);

@@ -75,7 +75,7 @@ void check_cards(const Fields& plan, std::string_view key) {
   if (value == nullptr) return;
   if (!value->is_array() || value->size() > 100) {
     return plan.findings()->add(plan.at(key), shown(*value) +
-                                                  " is not such a list; legal: a list of up to 100 texts "
+                                                  " is no list of cards; legal: a list of up to 100 texts "
                                                   "or objects of texts");
   }
   const auto is_text = [](const Json& json) {

@@ -42,11 +42,14 @@ void judge_entry(const SurveyModel& model, const std::string& label, const PitEn
 
 std::vector<FileProblem> blank_fields(const SurveyModel& model) {
   std::vector<NodeId> ids;
-  for (const auto& [id, entry] : model.survey().pits()) ids.push_back(id);
+  for (const auto& [id, entry] : model.survey().pits())
+    ids.push_back(id);
   std::sort(ids.begin(), ids.end());
   std::vector<FileProblem> found;
-  for (const NodeId id : ids) judge_entry(model, model.label(id), *model.survey().pit(id), &found);
-  for (const auto& [label, entry] : model.survey().off_grid_pits()) judge_entry(model, label, entry, &found);
+  for (const NodeId id : ids)
+    judge_entry(model, model.label(id), *model.survey().pit(id), &found);
+  for (const auto& [label, entry] : model.survey().off_grid_pits())
+    judge_entry(model, label, entry, &found);
   return found;
 }
 

@@ -42,8 +42,10 @@ std::optional<Point> last_place(const SurveyModel& model, const std::string& cre
                        record.place.value_or(node_place)};
     if (!last || std::tie(here.dug_ms, here.clock) > std::tie(last->dug_ms, last->clock)) last = here;
   };
-  for (const auto& [id, entry] : model.survey().pits()) look_at(entry, model.survey().ground().frame.ground(id));
-  for (const auto& [label, entry] : model.survey().off_grid_pits()) look_at(entry, {});
+  for (const auto& [id, entry] : model.survey().pits())
+    look_at(entry, model.survey().ground().frame.ground(id));
+  for (const auto& [label, entry] : model.survey().off_grid_pits())
+    look_at(entry, {});
   return last ? std::optional<Point>(last->place) : std::nullopt;
 }
 
@@ -52,15 +54,18 @@ std::vector<NodeId> walked(const SurveyModel& model, const std::vector<NodeId>& 
   std::vector<std::size_t> order;
   if (model.plan().nearest_order) {
     std::vector<Point> places;
-    for (const NodeId id : due) places.push_back(frame.ground(id));
+    for (const NodeId id : due)
+      places.push_back(frame.ground(id));
     order = nearest_order(start, places);
   } else {
     std::vector<Node> nodes;
-    for (const NodeId id : due) nodes.push_back(frame.node(id));
+    for (const NodeId id : due)
+      nodes.push_back(frame.node(id));
     order = transect_order(frame.lattice(), first_sample_rows(model.survey().ground()), nodes);
   }
   std::vector<NodeId> sorted;
-  for (const std::size_t i : order) sorted.push_back(due[i]);
+  for (const std::size_t i : order)
+    sorted.push_back(due[i]);
   return sorted;
 }
 
@@ -91,7 +96,8 @@ DigOrder dig_order(const SurveyModel& model, const std::string& crew, const std:
     order.due.push_back(std::move(stop));
   }
   order.asked = survey.asked();
-  for (const Network& network : find_networks(list)) order.open_clusters += network.open.empty() ? 0u : 1u;
+  for (const Network& network : find_networks(list))
+    order.open_clusters += network.open.empty() ? 0u : 1u;
   return order;
 }
 

@@ -13,16 +13,16 @@ namespace nearpit {
 struct DigStop {
   NodeId node = kNoNode;
   bool first_sample = false;
-  std::vector<NodeId> of;      // positives that opened it; empty for the first sample
+  std::vector<NodeId> of;  // positives that opened it; empty for the first sample
   std::int32_t ring = 0;
   Point place;
-  double distance_m = 0;       // from the stop before
-  double bearing_deg = 0;      // clockwise from grid north
+  double distance_m = 0;   // from the stop before
+  double bearing_deg = 0;  // clockwise from grid north
 };
 
 struct DigOrder {
   std::vector<DigStop> due;
-  std::vector<NodeId> asked;   // judgement pits that the crew asked for, apart
+  std::vector<NodeId> asked;  // judgement pits that the crew asked for, apart
   std::size_t first_sample_left = 0;
   std::size_t neighbours_left = 0;
   std::size_t open_clusters = 0;

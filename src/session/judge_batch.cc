@@ -12,9 +12,7 @@ namespace {
 
 Error bad(std::string line) { return Error(ErrorKind::kBadInput, std::move(line)); }
 
-std::string at(const Origin& origin) {
-  return origin.place.empty() ? "" : origin.place + ":" + std::to_string(origin.line) + ": ";
-}
+std::string at(const Origin& origin) { return origin.place.empty() ? "" : origin.place + ": "; }
 
 Status needs_why(const Action& action, const std::string& what) {
   return action.why.empty() ? Status(bad("why: missing; say why " + what)) : ok_status();
@@ -31,7 +29,8 @@ Status BatchJudge::judge(const std::vector<Action>& actions) {
   for (const Action& action : actions) {
     const Status done = judge_one(action);
     if (done) continue;
-    for (const std::string& line : done.error().lines) findings.push_back(at(action.origin) + line);
+    for (const std::string& line : done.error().lines)
+      findings.push_back(at(action.origin) + line);
   }
   if (findings.empty()) findings = not_reached();
   if (findings.empty()) return ok_status();
@@ -58,7 +57,8 @@ const std::vector<LogHead>& BatchJudge::heads(const std::string& object) const {
 
 Status BatchJudge::write(const std::string& object, std::string body, const std::string& by, const std::string& why) {
   std::vector<std::string> parents;
-  for (const LogHead& head : heads(object)) parents.push_back(head.revision);
+  for (const LogHead& head : heads(object))
+    parents.push_back(head.revision);
   Revision revision = maker_.make(object, std::move(body), by, why, std::move(parents));
   std::vector<LogHead> now{{revision.id, revision.clock, revision.writer, revision.by, revision.body}};
   touched_.insert(object);
@@ -95,7 +95,8 @@ std::vector<std::string> BatchJudge::not_reached() const {
     if (recorded.pit.node != kNoNode && model_.survey().dig_list().in_design(recorded.pit.node)) continue;
     const bool said = recorded.chosen_by == ChosenBy::kDesign;
     findings.push_back(at(recorded.origin) + (said ? "chosen_by: 'design', but " : recorded.field + ": ") +
-                       recorded.pit.label + " is not due; correct the label, or say chosen_by 'judgement' if it was dug "
+                       recorded.pit.label +
+                       " is not due; correct the label, or say chosen_by 'judgement' if it was dug "
                        "on judgement, 'asked' if another crew's find opened it");
   }
   return findings;
@@ -150,8 +151,9 @@ Status BatchJudge::carry_out(const BelongsTo& given, const Action& action) {
   }
   if (other->node != kNoNode && record.place &&
       distance_m(*record.place, survey.ground().frame.ground(other->node)) > model_.plan().max_move_m) {
-    return bad("other: the record says it was dug more than " + std::to_string(static_cast<int>(model_.plan().max_move_m)) +
-               " m from " + other->label + "; correct its x and y first");
+    return bad("other: the record says it was dug more than " +
+               std::to_string(static_cast<int>(model_.plan().max_move_m)) + " m from " + other->label +
+               "; correct its x and y first");
   }
   remember_recorded(*other, "other", record.chosen_by, action.origin);
   PitRecord gone = record;
@@ -166,7 +168,8 @@ Status BatchJudge::carry_out(const AskNeighbours& given, const Action& action) {
   const bool judgement = pit.node != kNoNode && !model_.survey().dig_list().in_design(pit.node) &&
                          model_.survey().ground().positive.positive(model_.entry(pit)->record());
   if (!judgement) {
-    return bad("pit: " + pit.label + " is no positive judgement pit on the grid; only such a pit needs its neighbours asked for");
+    return bad("pit: " + pit.label +
+               " is no positive judgement pit on the grid; only such a pit needs its neighbours asked for");
   }
   PitRecord record = model_.entry(pit)->record();
   record.opens_neighbours = true;
@@ -177,7 +180,8 @@ std::string BatchJudge::free_area_name() const {
   const auto& areas = model_.survey().closed_areas();
   for (std::size_t number = 1;; ++number) {
     const std::string name = "closed area " + std::to_string(number);
-    const bool taken = std::any_of(areas.begin(), areas.end(), [&](const auto& area) { return area.second.name == name; });
+    const bool taken =
+        std::any_of(areas.begin(), areas.end(), [&](const auto& area) { return area.second.name == name; });
     if (!taken) return name;
   }
 }
@@ -199,8 +203,8 @@ Status BatchJudge::carry_out(const CloseArea& given, const Action& action) {
   const auto& runs = survey.ground().frame.runs();
   for (const std::int32_t row : area.rows) {
     if (std::any_of(runs.begin(), runs.end(), [&](const Run& run) { return run.row == row; })) continue;
-    return bad("rows: " + std::to_string(row) + " is no row of this survey; legal: " + std::to_string(runs.front().row) +
-               " to " + std::to_string(runs.back().row));
+    return bad("rows: " + std::to_string(row) + " is no row of this survey; legal: " +
+               std::to_string(runs.front().row) + " to " + std::to_string(runs.back().row));
   }
   if (survey.nodes_in(area).empty()) {
     return bad("polygon: no pit of this survey lies inside it; give it in the plan's coordinates, metres");

@@ -33,7 +33,7 @@ class BatchJudge {
   // A pit recorded by this batch, to be judged when all of it is in.
   struct Recorded {
     PitName pit;
-    std::string field;   // which field of the action names the pit
+    std::string field;  // which field of the action names the pit
     ChosenBy chosen_by;
     Origin origin;
   };
@@ -61,8 +61,8 @@ class BatchJudge {
   RevisionMaker& maker_;
   std::map<std::string, std::vector<LogHead>> written_;  // by object, what this batch made of it
   std::set<std::string> touched_;
-  std::map<std::string, Origin> first_rows_;             // pits of the tables, to find one that comes twice
-  std::set<std::string> known_before_;                   // pits that had a record or that the design reached before the batch
+  std::map<std::string, Origin> first_rows_;  // pits of the tables, to find one that comes twice
+  std::set<std::string> known_before_;        // pits that had a record or that the design reached before the batch
   std::vector<Recorded> recorded_;
   std::vector<Revision> revisions_;
   std::vector<NodeId> changed_;

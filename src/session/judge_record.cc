@@ -46,8 +46,10 @@ void take_fields(const RecordPit& given, PitRecord* record) {
   take(given.bag, &record->bag);
   take(given.note, &record->note);
   if (given.chosen_by) record->chosen_by = given.chosen_by->value_or(ChosenBy::kUnsaid);
-  for (const auto& [find, count] : given.counts) record->counts[find] = count.value_or(0);
-  for (const auto& [find, grams] : given.weights_g) record->weights_g[find] = grams;
+  for (const auto& [find, count] : given.counts)
+    record->counts[find] = count.value_or(0);
+  for (const auto& [find, grams] : given.weights_g)
+    record->weights_g[find] = grams;
 }
 
 void take_time(const RecordPit& given, const SurveyModel& model, const WallTime& now, PitRecord* record) {
@@ -62,7 +64,8 @@ void take_time(const RecordPit& given, const SurveyModel& model, const WallTime&
 
 bool any_find(const PitRecord& record) {
   const bool counted = std::any_of(record.counts.begin(), record.counts.end(), [](auto count) { return count > 0; });
-  const bool weighed = std::any_of(record.weights_g.begin(), record.weights_g.end(), [](auto grams) { return grams > 0.0; });
+  const bool weighed =
+      std::any_of(record.weights_g.begin(), record.weights_g.end(), [](auto grams) { return grams > 0.0; });
   return counted || weighed;
 }
 
@@ -78,7 +81,8 @@ Status settle_place(const SurveyModel& model, const PitName& pit, const RecordPi
     return ok_status();
   }
   if (!record->place) {
-    if (!record->moved.empty()) return bad("moved: " + in_quotes(record->moved) + " needs x and y, where the pit was dug");
+    if (!record->moved.empty())
+      return bad("moved: " + in_quotes(record->moved) + " needs x and y, where the pit was dug");
     return ok_status();
   }
   const double away = distance_m(model.survey().ground().frame.ground(pit.node), *record->place);
@@ -108,7 +112,8 @@ Status settle_status(const RecordPit& given, PitRecord* record) {
   }
   if (!record->reason) return bad("reason: missing; legal: " + all_not_dug_reasons());
   if (any_find(*record)) {
-    return bad("status: 'not_dug' but finds are recorded for this pit; clear them with empty cells, or withdraw the record");
+    return bad(
+        "status: 'not_dug' but finds are recorded for this pit; clear them with empty cells, or withdraw the record");
   }
   if (record->reason == NotDugReason::kOther && record->note.empty()) {
     return bad("note: missing; reason 'other' needs a note");
@@ -140,7 +145,8 @@ Result<PitRecord> new_record(const SurveyModel& model, const PitName& pit, const
   take_fields(given, &record);
   take_time(given, model, now, &record);
   if (pit.node == kNoNode && record.chosen_by != ChosenBy::kJudgement) {
-    return bad("pit: " + in_quotes(pit.label) + " is no pit of the grid; if it was dug off the grid on judgement, say so with " +
+    return bad("pit: " + in_quotes(pit.label) +
+               " is no pit of the grid; if it was dug off the grid on judgement, say so with " +
                "chosen_by 'judgement' and x, y; if not, correct the label");
   }
   NEARPIT_TRY(settle_place(model, pit, given, &record));

@@ -22,7 +22,8 @@ void fill_from_record(const PitRecord& record, const PositiveRule& rule, PitRow*
   row->bag = record.bag;
   row->note = record.note;
   if (record.status != PitStatus::kDug) return;
-  for (std::size_t i = 0; i < row->finds.size(); ++i) row->finds[i] = record.counts[i];
+  for (std::size_t i = 0; i < row->finds.size(); ++i)
+    row->finds[i] = record.counts[i];
 }
 
 std::string closed_reason(const Survey& survey, NodeId id) {
@@ -85,7 +86,8 @@ std::vector<ClusterRow> cluster_rows(const SurveyModel& model) {
     row.closed = cluster.closed();
     row.finds.assign(cluster.finds.begin(), cluster.finds.end());
     std::vector<Node> nodes;
-    for (const NodeId id : cluster.network.nodes) nodes.push_back(frame.node(id));
+    for (const NodeId id : cluster.network.nodes)
+      nodes.push_back(frame.node(id));
     row.outline = cells_outline(frame.lattice(), nodes);
     rows.push_back(std::move(row));
   }
@@ -103,7 +105,8 @@ std::vector<AreaRow> area_rows(const SurveyModel& model) {
     row.outline = ground.areas.list[i].boundary.empty() ? model.plan().boundary : ground.areas.list[i].boundary;
     rows.push_back(std::move(row));
   }
-  for (const AreaId area : ground.areas.of_node) ++rows[area].nodes;
+  for (const AreaId area : ground.areas.of_node)
+    ++rows[area].nodes;
   return rows;
 }
 
@@ -114,7 +117,8 @@ std::vector<ClosedAreaRow> closed_rows(const SurveyModel& model) {
     ClosedAreaRow row{object, area.name, std::string(word(area.reason)), area.by, area.open_again, area.polygon};
     if (row.outline.empty()) {
       std::vector<Node> nodes;
-      for (const NodeId id : model.survey().nodes_in(area)) nodes.push_back(frame.node(id));
+      for (const NodeId id : model.survey().nodes_in(area))
+        nodes.push_back(frame.node(id));
       row.outline = cells_outline(frame.lattice(), nodes);
     }
     rows.push_back(std::move(row));

@@ -16,7 +16,8 @@ namespace {
 
 Error in_plan(const std::string& plan_path, const Error& error) {
   std::vector<std::string> lines;
-  for (const std::string& line : error.lines) lines.push_back(plan_path + ": " + line);
+  for (const std::string& line : error.lines)
+    lines.push_back(plan_path + ": " + line);
   return {error.kind, std::move(lines)};
 }
 

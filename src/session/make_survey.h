@@ -18,8 +18,8 @@ struct MadeArea {
 
 struct MadeSurvey {
   std::string survey;
-  std::string draw;             // pits, transects, systematic
-  std::int64_t pits = 0;        // of the frame
+  std::string draw;       // pits, transects, systematic
+  std::int64_t pits = 0;  // of the frame
   std::int64_t first_sample = 0;
   double boundary_m2 = 0;
   std::string crs;

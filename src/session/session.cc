@@ -86,13 +86,17 @@ Result<Applied> Session::apply(const std::vector<Action>& actions) {
   BatchJudge batch(*model_, log_, maker);
   NEARPIT_TRY(batch.judge(actions));
   Applied applied;
+  applied.actions = actions.size();
   applied.revisions = batch.revisions().size();
   applied.notes = std::move(writer.notes);
   const auto write_all = [&]() -> Status {
     if (writer.is_new) NEARPIT_TRY(transaction.add_writer(writer.row.id, writer.row.device, maker.now()));
-    for (const Revision& revision : batch.revisions()) NEARPIT_TRY(transaction.append(revision));
-    NEARPIT_TRY(transaction.update_layers(layer_changes(*model_, batch.changed_nodes(), batch.changed_objects()), maker.now()));
-    const Status kept = environment_->memory.remember(survey_id_, {writer.row.id, writer.row.last_hash, maker.last_hash()});
+    for (const Revision& revision : batch.revisions())
+      NEARPIT_TRY(transaction.append(revision));
+    NEARPIT_TRY(
+        transaction.update_layers(layer_changes(*model_, batch.changed_nodes(), batch.changed_objects()), maker.now()));
+    const Status kept =
+        environment_->memory.remember(survey_id_, {writer.row.id, writer.row.last_hash, maker.last_hash()});
     if (!kept) applied.notes.push_back(kept.error().lines.front());
     return transaction.commit();
   };
@@ -100,7 +104,8 @@ Result<Applied> Session::apply(const std::vector<Action>& actions) {
     batch.take_back();
     return written.error();
   }
-  for (const Revision& revision : batch.revisions()) log_.add(revision);
+  for (const Revision& revision : batch.revisions())
+    log_.add(revision);
   log_.take_changed();  // the model holds them already
   NEARPIT_ASSIGN(last, file_.last_rowid());
   last_rowid_ = last;
@@ -142,9 +147,11 @@ Result<Figures> Session::figures_of_day(const std::string& day) {
 CheckReport Session::check() {
   CheckReport report;
   report.problems = check_file(file_);
-  for (FileProblem& problem : check_layers(file_, layer_rows(*model_))) report.problems.push_back(std::move(problem));
+  for (FileProblem& problem : check_layers(file_, layer_rows(*model_)))
+    report.problems.push_back(std::move(problem));
   report.whole = report.problems.empty();
-  for (FileProblem& problem : blank_fields(*model_)) report.problems.push_back(std::move(problem));
+  for (FileProblem& problem : blank_fields(*model_))
+    report.problems.push_back(std::move(problem));
   report.complete = report.problems.empty();
   return report;
 }

@@ -20,13 +20,9 @@
 namespace nearpit {
 
 struct Applied {
+  std::size_t actions = 0;
   std::size_t revisions = 0;
   std::vector<std::string> notes;  // what the person should know: a new writer began, who this is can't be remembered
-};
-
-struct Incomplete {
-  std::string pit;
-  std::vector<std::string> fields;  // that the plan requires and that are blank
 };
 
 struct CheckReport {

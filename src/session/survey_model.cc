@@ -26,7 +26,8 @@ const LogHead& latest(const std::vector<LogHead>& heads) {
 std::string frame_extent(const Survey& survey) {
   const Frame& frame = survey.ground().frame;
   std::int32_t widest = 0;
-  for (const Run& run : frame.runs()) widest = std::max(widest, run.last);
+  for (const Run& run : frame.runs())
+    widest = std::max(widest, run.last);
   return "rows T" + std::to_string(frame.runs().front().row) + " to T" + std::to_string(frame.runs().back().row) +
          ", pits up to " + std::to_string(widest) + ", inside the boundary";
 }
@@ -42,7 +43,8 @@ SurveyModel::SurveyModel(Plan plan, std::unique_ptr<const SurveyGround> ground)
 std::vector<std::string> SurveyModel::labels_of(const std::vector<NodeId>& ids) const {
   std::vector<std::string> out;
   out.reserve(ids.size());
-  for (const NodeId id : ids) out.push_back(label(id));
+  for (const NodeId id : ids)
+    out.push_back(label(id));
   return out;
 }
 
@@ -57,8 +59,8 @@ Result<PitName> SurveyModel::name_of(std::string_view text) const {
     return Error(ErrorKind::kBadInput, in_quotes(text) + " is no pit of this survey; legal: " + frame_extent(survey_));
   }
   if (!is_name(text, kLongestFreeLabel)) {
-    return Error(ErrorKind::kBadInput, in_quotes(text) + " can't name a pit; legal: a pit of the grid such as " + label(0) +
-                                           ", or a free label of 1 to " + std::to_string(kLongestFreeLabel) +
+    return Error(ErrorKind::kBadInput, in_quotes(text) + " can't name a pit; legal: a pit of the grid such as " +
+                                           label(0) + ", or a free label of 1 to " + std::to_string(kLongestFreeLabel) +
                                            " characters for a judgement pit off the grid");
   }
   return PitName{kNoNode, pit_object(std::string(text)), std::string(text)};
@@ -70,7 +72,9 @@ const PitEntry* SurveyModel::entry(const PitName& pit) const {
 
 Status SurveyModel::set_object(const std::string& object, const std::vector<LogHead>& heads,
                                std::vector<NodeId>* changed) {
-  const auto add = [&](const std::vector<NodeId>& nodes) { changed->insert(changed->end(), nodes.begin(), nodes.end()); };
+  const auto add = [&](const std::vector<NodeId>& nodes) {
+    changed->insert(changed->end(), nodes.begin(), nodes.end());
+  };
   if (is_pit_object(object)) {
     std::vector<Head> read;
     for (const LogHead& head : heads) {

@@ -19,9 +19,9 @@ namespace nearpit {
 
 // A pit as somebody named it: a node of the frame, or a free label off the grid.
 struct PitName {
-  NodeId node = kNoNode;   // kNoNode: off the grid
-  std::string object;      // "pit/T7-12"
-  std::string label;       // as the plan writes it, or the free label
+  NodeId node = kNoNode;  // kNoNode: off the grid
+  std::string object;     // "pit/T7-12"
+  std::string label;      // as the plan writes it, or the free label
 };
 
 class SurveyModel {

@@ -40,7 +40,8 @@ Cluster cluster_of(const Survey& survey, Network network, std::size_t finds) {
 std::vector<Cluster> as_clusters(const Survey& survey, std::vector<Network> networks, std::size_t finds) {
   std::vector<Cluster> clusters;
   clusters.reserve(networks.size());
-  for (Network& network : networks) clusters.push_back(cluster_of(survey, std::move(network), finds));
+  for (Network& network : networks)
+    clusters.push_back(cluster_of(survey, std::move(network), finds));
   return clusters;
 }
 

@@ -12,9 +12,9 @@
 namespace nearpit {
 
 struct Cluster {
-  NodeId label = kNoNode;                 // its first dug pit: earliest dug_at, then row, then column
+  NodeId label = kNoNode;  // its first dug pit: earliest dug_at, then row, then column
   Network network;
-  std::vector<std::uint64_t> finds;       // by the plan's order
+  std::vector<std::uint64_t> finds;  // by the plan's order
   std::size_t in_first_sample = 0;
   double area_m2 = 0;
   bool closed() const { return network.open.empty(); }

@@ -101,7 +101,8 @@ std::int32_t DigList::best_ring(NodeId id) const {
 void DigList::relax_from(std::vector<NodeId> sources, std::vector<NodeId>* changed) {
   using Entry = std::pair<std::int32_t, NodeId>;
   std::priority_queue<Entry, std::vector<Entry>, std::greater<>> open;
-  for (const NodeId source : sources) open.emplace(ring(source), source);
+  for (const NodeId source : sources)
+    open.emplace(ring(source), source);
   while (!open.empty()) {
     const auto [from_ring, from] = open.top();
     open.pop();

@@ -15,8 +15,8 @@
 namespace nearpit {
 
 struct Head {
-  std::string revision;     // id of the revision
-  std::int64_t clock = 0;   // hybrid logical clock
+  std::string revision;    // id of the revision
+  std::int64_t clock = 0;  // hybrid logical clock
   std::string writer;
   PitRecord record;
 };

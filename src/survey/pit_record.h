@@ -19,15 +19,34 @@ enum class PitStatus { kDug, kNotDug, kWithdrawn };
 // Why a pit was not dug. Ground reasons mean undiggable ground; access reasons mean non-response: the ground may hold
 // anything, so estimates stay provisional.
 enum class NotDugReason {
-  kStandingWater, kSlope, kPaved, kDisturbed, kBareGround, kStructure,  // ground
-  kNoPermission, kUtility, kHazard, kStopWork, kOther,                  // access
+  kStandingWater,
+  kSlope,
+  kPaved,
+  kDisturbed,
+  kBareGround,
+  kStructure,  // ground
+  kNoPermission,
+  kUtility,
+  kHazard,
+  kStopWork,
+  kOther,  // access
 };
 enum class ReasonClass { kGround, kAccess };
 ReasonClass class_of(NotDugReason reason);
 
 enum class StopReason {
-  kSterileSubsoil, kBedrock, kImpenetrable, kWaterTable, kMaxDepth, kRoots, kDisturbanceFill,
-  kHumanRemainsStop, kFeatureFound, kUxoStop, kUtilityStop, kOther,
+  kSterileSubsoil,
+  kBedrock,
+  kImpenetrable,
+  kWaterTable,
+  kMaxDepth,
+  kRoots,
+  kDisturbanceFill,
+  kHumanRemainsStop,
+  kFeatureFound,
+  kUxoStop,
+  kUtilityStop,
+  kOther,
 };
 
 // What the crew said of how the pit was chosen; membership of the design is always derived.
@@ -35,23 +54,23 @@ enum class ChosenBy { kUnsaid, kDesign, kJudgement, kAsked };
 
 struct PitRecord {
   PitStatus status = PitStatus::kDug;
-  std::optional<NotDugReason> reason;     // exactly when not dug
+  std::optional<NotDugReason> reason;  // exactly when not dug
   std::string crew;
-  std::string started_at;                 // ISO 8601 with offset, or a date; empty: not said
-  std::string dug_at;                     // the same; never empty once saved
-  bool dug_at_defaulted = false;          // nobody said when: it is the time of saving
-  std::optional<double> depth_cm;         // 0 .. 1000
+  std::string started_at;          // ISO 8601 with offset, or a date; empty: not said
+  std::string dug_at;              // the same; never empty once saved
+  bool dug_at_defaulted = false;   // nobody said when: it is the time of saving
+  std::optional<double> depth_cm;  // 0 .. 1000
   std::optional<StopReason> stop;
   ChosenBy chosen_by = ChosenBy::kUnsaid;
-  std::optional<Point> place;             // as dug, ground metres; always there off the grid
-  std::string moved;                      // why it was dug off its node
-  std::optional<double> mesh_mm;          // (0, 100]
+  std::optional<Point> place;     // as dug, ground metres; always there off the grid
+  std::string moved;              // why it was dug off its node
+  std::optional<double> mesh_mm;  // (0, 100]
   std::optional<bool> backfilled;
   std::string bag;
   std::string note;
-  std::vector<std::uint32_t> counts;      // by the plan's order of finds; all zero unless dug
+  std::vector<std::uint32_t> counts;             // by the plan's order of finds; all zero unless dug
   std::vector<std::optional<double>> weights_g;  // by the plan's order of finds, >= 0
-  bool opens_neighbours = false;          // a judgement positive whose ring the crew asked for
+  bool opens_neighbours = false;                 // a judgement positive whose ring the crew asked for
 
   friend bool operator==(const PitRecord&, const PitRecord&) = default;
 };

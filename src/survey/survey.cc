@@ -12,7 +12,7 @@ PitState state_of(const PitRecord& record, const PositiveRule& rule) {
       return rule.positive(record) ? PitState::kPositive : PitState::kNegative;
     case PitStatus::kNotDug:
       return record.reason && class_of(*record.reason) == ReasonClass::kGround ? PitState::kNotDugGround
-                                                                             : PitState::kNotDugAccess;
+                                                                               : PitState::kNotDugAccess;
     case PitStatus::kWithdrawn:
       break;
   }
@@ -59,14 +59,16 @@ std::vector<NodeId> Survey::nodes_in(const ClosedArea& area) const {
   }
   for (const Run& run : ground_->frame.runs()) {
     if (std::find(area.rows.begin(), area.rows.end(), run.row) == area.rows.end()) continue;
-    for (NodeId id = run.start; id <= run.start + (run.last - run.first); ++id) nodes.push_back(id);
+    for (NodeId id = run.start; id <= run.start + (run.last - run.first); ++id)
+      nodes.push_back(id);
   }
   return nodes;
 }
 
 void Survey::mark_closed(const ClosedArea& area, int change, std::vector<NodeId>* changed) {
   if (area.open_again) return;
-  for (const NodeId id : nodes_in(area)) list_.add_closed(id, class_of(area.reason), change, changed);
+  for (const NodeId id : nodes_in(area))
+    list_.add_closed(id, class_of(area.reason), change, changed);
 }
 
 std::vector<NodeId> Survey::forget_closed_area(const std::string& object) {

@@ -26,8 +26,8 @@ struct PitEntry {
 struct ClosedArea {
   std::string name;
   NotDugReason reason = NotDugReason::kOther;
-  MultiPolygon polygon;               // or
-  std::vector<std::int32_t> rows;     // these rows of the lattice
+  MultiPolygon polygon;            // or
+  std::vector<std::int32_t> rows;  // these rows of the lattice
   std::string by;
   bool open_again = false;
 };

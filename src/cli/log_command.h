@@ -1,0 +1,13 @@
+// nearpit log FILE PITS.csv: record pits from a table, all or nothing.
+#ifndef NEARPIT_CLI_LOG_COMMAND_H_
+#define NEARPIT_CLI_LOG_COMMAND_H_
+
+#include "cli/command.h"
+
+namespace nearpit::cli {
+
+void add_log(CLI::App& program, Run* run);
+
+}  // namespace nearpit::cli
+
+#endif  // NEARPIT_CLI_LOG_COMMAND_H_

@@ -1,0 +1,13 @@
+// nearpit new PLAN.json FILE: make the survey file and draw the first sample.
+#ifndef NEARPIT_CLI_NEW_COMMAND_H_
+#define NEARPIT_CLI_NEW_COMMAND_H_
+
+#include "cli/command.h"
+
+namespace nearpit::cli {
+
+void add_new(CLI::App& program, Run* run);
+
+}  // namespace nearpit::cli
+
+#endif  // NEARPIT_CLI_NEW_COMMAND_H_
