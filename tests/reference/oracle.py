@@ -163,15 +163,17 @@ class Survey:
         first_sample_open = any(node in self.first_sample for node in self.due())
         for of in ["target"] + self.plan["finds"] + ["positive pits"]:
             y = self.value_of(of)
-            hh = hansen_hurwitz(self.strata, network, y)
-            ht = horvitz_thompson(self.strata, network, y)
+            squares = {node: value ** 2 for node, value in y.items()}
+            parts = hansen_hurwitz(self.strata, network, y).parts
+            for name, estimator in (("hansen_hurwitz", lambda of_y: hansen_hurwitz(self.strata, network, of_y)),
+                                    ("horvitz_thompson", lambda of_y: horvitz_thompson(self.strata, network, of_y))):
+                rows.append(self._row(of, name, estimator(y), open_now, parts, estimator(squares).mean))
             first = first_sample_only(self.strata, y)
-            rows.append(self._row(of, "hansen_hurwitz", hh, open_now, hh.parts))
-            rows.append(self._row(of, "horvitz_thompson", ht, open_now, hh.parts))
-            rows.append(self._row(of, "first_sample_only", first, first_sample_open, first.parts))
+            rows.append(self._row(of, "first_sample_only", first, first_sample_open, first.parts,
+                                  first_sample_only(self.strata, squares).mean))
         return rows
 
-    def _row(self, of, estimator, estimate, open_now, parts):
+    def _row(self, of, estimator, estimate, open_now, parts, mean_square):
         variance = None if open_now else estimate.variance
         one_stratum_of_pits = len(self.strata) == 1 and self.frame.draw_kind() == "pits"
         if variance is not None and one_stratum_of_pits and abs(variance) < Fraction(1, 10 ** 12) * estimate.mean ** 2:
@@ -186,7 +188,16 @@ class Survey:
                 "variance_of_mean": variance,
                 "standard_error": None if variance is None or variance < 0 else math.sqrt(variance),
                 "plain_t": self.plain_t(estimate.mean, variance, parts, Fraction(found, len(self.frame.nodes))),
+                "ground_standard_error": None if pits else self.ground_standard_error(estimate.mean, variance, mean_square),
                 "status": self.status(estimator)}
+
+    def ground_standard_error(self, mean, variance, mean_square):
+        """Of per_m2: S2 = N/(N-1) [mean(y^2) - (mean^2 - v)], not below 0, and v_ground = v + S2/N."""
+        size = len(self.frame.nodes)
+        if variance is None or variance < 0 or size == 1:
+            return None
+        spread = max(Fraction(0), Fraction(size, size - 1) * (mean_square - mean ** 2 + variance))
+        return math.sqrt(variance + spread / size) / self.frame.pit_m2()
 
     def plain_t(self, mean, variance, parts, at_least):
         """The plain t interval, or None; neither end below what was found already."""

@@ -93,18 +93,27 @@ def estimate(survey, want, got):
         if not close(got["standard_error"], want["standard_error"]):
             lines.append(f"{where} standard_error: program {got['standard_error']}, oracle {want['standard_error']}")
         lines += interval(survey, where, want["plain_t"], got["interval"])
+        lines += ground(where, want["ground_standard_error"], got["ground"])
     if (got["variance_of_mean"] is None or got["status"] != "final") and not got["why"]:
         lines.append(f"{where}: nothing in why")
     return lines
 
 
 def interval(survey, where, plain_t, got):
-    """The ends are compared when the method is the plain t; any method must keep the level and the order of its ends."""
+    """The ends are compared for the plain t and for a sample of everything; any method must keep the level and the order of its ends."""
     if got is None or plain_t is None:
         return differ(where + " interval", got, plain_t)
     lines = differ(where + " interval level", got["level"], survey.plan.get("confidence", 0.95))
-    if "plain t" in got["method"] and not all(map(close, (got["lower"], got["upper"]), plain_t)):
+    if got["method"] in ("plain t", "every unit drawn") and not all(map(close, (got["lower"], got["upper"]), plain_t)):
         lines.append(f"{where} interval: program {got['lower']} to {got['upper']}, oracle {plain_t[0]} to {plain_t[1]}")
     if not got["lower"] <= got["upper"]:
         lines.append(f"{where} interval: lower {got['lower']} above upper {got['upper']}")
     return lines
+
+
+def ground(where, want, got):
+    """The ground's standard error is a difference of nearly equal sums too, so that a 0 may come out as a last digit."""
+    got = got and got["standard_error"]
+    if close(got, want, floor=1e-6 if want == 0 else 0):
+        return []
+    return [f"{where} ground standard_error: program {got}, oracle {want}"]
