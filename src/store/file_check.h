@@ -15,7 +15,7 @@ struct FileProblem {
   std::string kind;   // "pages", "identity", "schema", "chain", "gap", "orphan", "layer", …
   std::string where;  // table, revision, layer and label
   std::string what;
-  std::string action; // what to do
+  std::string action;  // what to do
 };
 
 // The database's own checks (integrity_check, foreign_key_check), GeoPackage identity, our schema and triggers, the writers' sequences and SHA-256

@@ -14,14 +14,15 @@ namespace nearpit {
 
 // Every node of the first sample, and every other pit dug, due, halted or not dug; off the grid too.
 struct PitRow {
-  std::string label;       // unique
-  std::string outcome;     // positive, negative, not dug, due, halted, withdrawn (a pit of the first sample whose record was taken back is due again)
-  Point place;             // as dug, else the node
-  std::string area;        // "" off the grid
+  std::string label;  // unique
+  std::string
+      outcome;  // positive, negative, not dug, due, halted, withdrawn (a pit of the first sample whose record was taken back is due again)
+  Point place;  // as dug, else the node
+  std::string area;  // "" off the grid
   bool first_sample = false;
   std::optional<std::int64_t> ring;  // nothing when the design does not reach it
   std::string chosen_by;
-  std::string reason;      // why not dug
+  std::string reason;  // why not dug
   std::string crew;
   std::string dug_at;
   std::optional<double> depth_cm;
@@ -33,13 +34,13 @@ struct PitRow {
 };
 
 struct ClusterRow {
-  std::string label;       // unique: its first dug pit
+  std::string label;  // unique: its first dug pit
   std::int64_t pits = 0;
   std::int64_t in_first_sample = 0;
   double area_m2 = 0;
   bool closed = false;
   std::vector<std::int64_t> finds;
-  MultiPolygon outline;    // union of its cells
+  MultiPolygon outline;  // union of its cells
   friend bool operator==(const ClusterRow&, const ClusterRow&);
 };
 
@@ -52,7 +53,7 @@ struct AreaRow {
 };
 
 struct ClosedAreaRow {
-  std::string object;      // unique: id of the closed area
+  std::string object;  // unique: id of the closed area
   std::string name;
   std::string reason;
   std::string by;
@@ -66,15 +67,15 @@ struct LayerRows {
   std::vector<PitRow> pits;
   std::vector<ClusterRow> clusters;
   MultiPolygon boundary;
-  std::string survey;              // name, in the boundary layer
+  std::string survey;  // name, in the boundary layer
   std::vector<AreaRow> strata;
   std::vector<ClosedAreaRow> closed_areas;
 };
 
 // What one save changes. `clusters` and `closed_areas` are whole when given (they are small).
 struct LayerChanges {
-  std::vector<PitRow> put_pits;             // inserted, or replaced by label
-  std::vector<std::string> remove_pits;     // labels
+  std::vector<PitRow> put_pits;          // inserted, or replaced by label
+  std::vector<std::string> remove_pits;  // labels
   std::optional<std::vector<ClusterRow>> clusters;
   std::optional<std::vector<ClosedAreaRow>> closed_areas;
 };

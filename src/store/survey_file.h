@@ -24,10 +24,10 @@ namespace nearpit {
 
 // What a survey file is made of at first, besides its layers.
 struct FileStart {
-  std::string survey_id;    // UUID of the survey: the same in every copy
-  std::string plan;         // the plan's JSON, boundary in place
+  std::string survey_id;                   // UUID of the survey: the same in every copy
+  std::string plan;                        // the plan's JSON, boundary in place
   std::vector<std::vector<UnitId>> drawn;  // by area
-  int epsg = 0;             // 0: a local grid (srs_id -1)
+  int epsg = 0;                            // 0: a local grid (srs_id -1)
   std::string crs_name;
   std::string crs_wkt;
   WallTime made_at;
