@@ -119,6 +119,16 @@ TEST(DigList, ACutCircleIsReachedTheOtherWayRound) {
   EXPECT_EQ(survey.dig_list().ring(node_at(survey, 1, 4)), 9);
 }
 
+TEST(DigList, ALostSupportGivesWayToTheNextBest) {
+  const Picture picture{"@.##@"};
+  const DrawnRules four{.neighbours = NeighbourRule::kFour};
+  EXPECT_EQ(standing(picture, four), (Picture{"#1###"}));
+  Survey survey = drawn_survey(picture, four);
+  EXPECT_EQ(survey.dig_list().ring(node_at(survey, 1, 2)), 1);
+  survey.set_pit(node_at(survey, 1, 1), {head_of(dug_record(0), 9)});
+  EXPECT_EQ(standing_of(survey.dig_list()), (Picture{"-3###"}));
+}
+
 TEST(DigList, NotDugStopsTheRing) {
   EXPECT_EQ(standing({"@g.."}, {.neighbours = NeighbourRule::kFour}), (Picture{"#n.."}));
   EXPECT_EQ(standing({"@a.."}, {.neighbours = NeighbourRule::kFour}), (Picture{"#n.."}));
