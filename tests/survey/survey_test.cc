@@ -234,6 +234,28 @@ TEST(Survey, AskedPitsOpenFurtherOnesOnlyWhenAsked) {
   EXPECT_EQ(survey.asked(), (std::vector<NodeId>{1, 4}));
 }
 
+TEST(Survey, WhatIsTakenBackLeavesNoTrace) {
+  Survey survey = drawn_survey({".o.",
+                                "o.."}, {.neighbours = NeighbourRule::kFour});
+  const Picture before = standing_of(survey.dig_list());
+  survey.set_pit(1, {head_of(dug_record(1))});
+  survey.set_off_grid("J1", {head_of(dug_record(1))});
+  survey.set_closed_area("a", rows_closed({2}, NotDugReason::kSlope));
+  EXPECT_EQ(standing_of(survey.dig_list()), (Picture{"1#1",
+                                                     "cc."}));
+  const std::vector<NodeId> reopened = survey.forget_closed_area("a");
+  EXPECT_TRUE(told_of(reopened, 3));
+  EXPECT_TRUE(told_of(reopened, 4));
+  EXPECT_TRUE(told_of(survey.set_pit(1, {}), 0));
+  survey.set_off_grid("J1", {});
+  EXPECT_EQ(standing_of(survey.dig_list()), before);
+  EXPECT_EQ(survey.pit(1), nullptr);
+  EXPECT_EQ(survey.off_grid("J1"), nullptr);
+  EXPECT_TRUE(survey.pits().empty());
+  EXPECT_TRUE(survey.off_grid_pits().empty());
+  EXPECT_TRUE(survey.closed_areas().empty());
+}
+
 TEST(Survey, StaysWholeWhenMoved) {
   Survey first = drawn_survey({".@."});
   const Survey second = std::move(first);
