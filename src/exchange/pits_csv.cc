@@ -173,7 +173,7 @@ Result<std::vector<Action>> read_pits_csv(std::string_view text, const std::stri
     action.what = read_record(columns, plan, cells);
     action.by = cells.name(PitColumn::kBy).value_or(std::nullopt).value_or("");
     action.why = cells.note(PitColumn::kWhy).value_or(std::nullopt).value_or("");
-    action.origin = {file + ":" + std::to_string(row.line), row.line};
+    action.origin = {file, row.line};
     actions.push_back(std::move(action));
   }
   if (!findings.none()) return findings.error();
