@@ -27,6 +27,20 @@ class ChainInput {
 
 }  // namespace
 
+std::string start_hash(const std::string& survey_id, const std::string& plan,
+                       const std::vector<std::vector<std::uint32_t>>& drawn) {
+  ChainInput input;
+  input.add(survey_id);
+  input.add(plan);
+  input.add(static_cast<std::int64_t>(drawn.size()));
+  for (const std::vector<std::uint32_t>& units : drawn) {
+    input.add(static_cast<std::int64_t>(units.size()));
+    for (const std::uint32_t unit : units)
+      input.add(std::int64_t{unit});
+  }
+  return sha256_hex(input.text());
+}
+
 std::string chain_hash(const std::string& previous, const Revision& revision) {
   ChainInput input;
   input.add(previous);

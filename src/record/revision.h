@@ -13,20 +13,25 @@
 namespace nearpit {
 
 struct Revision {
-  std::string id;                    // UUIDv7
-  std::string writer;                // UUID of the writer: a device and a random id
-  std::int64_t seq = 0;              // 1, 2, 3 … of its writer, no gaps
-  std::int64_t clock = 0;            // hybrid logical clock (Kulkarni et al. 2014): milliseconds * 65536 + counter
-  std::string by;                    // who
-  WallTime at;                       // the wall clock when it was written
-  std::string object;                // "pit/T7-12", "pit/J1", "area/<uuid>", "stop/<uuid>"
-  std::string body;                  // the whole record as JSON
+  std::string id;          // UUIDv7
+  std::string writer;      // UUID of the writer: a device and a random id
+  std::int64_t seq = 0;    // 1, 2, 3 … of its writer, no gaps
+  std::int64_t clock = 0;  // hybrid logical clock (Kulkarni et al. 2014): milliseconds * 65536 + counter
+  std::string by;          // who
+  WallTime at;             // the wall clock when it was written
+  std::string object;      // "pit/T7-12", "pit/J1", "area/<uuid>", "stop/<uuid>"
+  std::string body;        // the whole record as JSON
   std::string why;
   std::vector<std::string> parents;  // ids it replaces, ascending
   std::string hash;                  // chain_hash of this and the writer's last
 };
 
-// SHA-256 over the previous hash of the writer ("" for its first) and every field, each led by its length in bytes, so that no two
+// What the chain of every writer begins with: SHA-256 over the survey's id, the plan's text and the drawn units of each area, so that neither can
+// be changed under the records. Frozen.
+std::string start_hash(const std::string& survey_id, const std::string& plan,
+                       const std::vector<std::vector<std::uint32_t>>& drawn);
+
+// SHA-256 over the previous hash of the writer (start_hash for its first) and every field, each led by its length in bytes, so that no two
 // revisions have the same input. Frozen.
 std::string chain_hash(const std::string& previous, const Revision& revision);
 

@@ -12,7 +12,9 @@ namespace {
 
 Error bad(std::string line) { return Error(ErrorKind::kBadInput, std::move(line)); }
 
-std::string at(const Origin& origin) { return origin.place.empty() ? "" : origin.place + ": "; }
+std::string at(const Origin& origin) {
+  return origin.place.empty() ? "" : origin.place + ":" + std::to_string(origin.line) + ": ";
+}
 
 Status needs_why(const Action& action, const std::string& what) {
   return action.why.empty() ? Status(bad("why: missing; say why " + what)) : ok_status();
@@ -81,6 +83,21 @@ void BatchJudge::note_known(const std::string& text) {
   if (reached || (entry && !entry->withdrawn())) known_before_.insert(pit->object);
 }
 
+void BatchJudge::caution_if_stopped(const PitName& pit, const PitRecord& record) {
+  const PitEntry* before = model_.entry(pit);
+  if (!record.stop || (before && before->record().stop == record.stop)) return;
+  std::string what;
+  if (record.stop == StopReason::kHumanRemainsStop)
+    what = "possible human remains: stop, protect the place, move nothing";
+  if (record.stop == StopReason::kUxoStop) what = "possible ordnance: leave it untouched, go back the way you came";
+  if (record.stop == StopReason::kUtilityStop) what = "a buried line: stop, keep everybody away";
+  if (what.empty()) return;
+  cautions_.push_back(
+      pit.label + ": " + what +
+      ", and tell those whom the law names; the pits around it stay on the dig list until you close the "
+      "area with 'act'");
+}
+
 void BatchJudge::remember_recorded(const PitName& pit, const std::string& field, ChosenBy chosen_by,
                                    const Origin& origin) {
   recorded_.push_back({pit, field, chosen_by, origin});
@@ -118,11 +135,12 @@ Status BatchJudge::carry_out(const RecordPit& given, const Action& action) {
   if (!named) return bad("pit: " + named.error().lines.front());
   const auto [first, is_new] = first_rows_.emplace(named->object, action.origin);
   if (!is_new) {
-    return bad("pit: " + named->label + " stands in line " + std::to_string(first->second.line) +
-               " already; each pit once in one file");
+    return bad("pit: " + in_quotes(given.pit) + " is " + named->label + ", which stands on line " +
+               std::to_string(first->second.line) + " already; keep one row for each pit");
   }
   NEARPIT_ASSIGN(record, new_record(model_, *named, given, action.why, maker_.now()));
   remember_recorded(*named, "pit", record.chosen_by, action.origin);
+  caution_if_stopped(*named, record);
   return write_pit(*named, record, action.by.empty() ? record.crew : action.by, action.why);
 }
 
@@ -145,15 +163,12 @@ Status BatchJudge::carry_out(const BelongsTo& given, const Action& action) {
     return bad("other: " + other->label + " has a record of its own; withdraw that first if it is wrong");
   }
   PitRecord record = model_.entry(pit)->record();
-  const Survey& survey = model_.survey();
   if (other->node == kNoNode && (!record.place || record.chosen_by != ChosenBy::kJudgement)) {
     return bad("other: " + in_quotes(other->label) + " is no pit of the grid; legal: a pit such as " + model_.label(0));
   }
-  if (other->node != kNoNode && record.place &&
-      distance_m(*record.place, survey.ground().frame.ground(other->node)) > model_.plan().max_move_m) {
-    return bad("other: the record says it was dug more than " +
-               std::to_string(static_cast<int>(model_.plan().max_move_m)) + " m from " + other->label +
-               "; correct its x and y first");
+  if (other->node != kNoNode && record.place && record.moved.empty()) record.moved = action.why;
+  if (const Status fits = check_place(model_, *other, record); !fits) {
+    return bad("other: the record does not fit " + other->label + ": " + fits.error().lines.front());
   }
   remember_recorded(*other, "other", record.chosen_by, action.origin);
   PitRecord gone = record;

@@ -26,6 +26,8 @@ class BatchJudge {
   void take_back();
 
   const std::vector<Revision>& revisions() const { return revisions_; }
+  // What people must hear at once: records that say work had to stop.
+  const std::vector<std::string>& cautions() const { return cautions_; }
   const std::vector<NodeId>& changed_nodes() const { return changed_; }
   const std::set<std::string>& changed_objects() const { return touched_; }
 
@@ -52,6 +54,7 @@ class BatchJudge {
   const std::vector<LogHead>& heads(const std::string& object) const;
   Status write(const std::string& object, std::string body, const std::string& by, const std::string& why);
   Status write_pit(const PitName& pit, const PitRecord& record, const std::string& by, const std::string& why);
+  void caution_if_stopped(const PitName& pit, const PitRecord& record);
   void remember_recorded(const PitName& pit, const std::string& field, ChosenBy chosen_by, const Origin& origin);
   std::vector<std::string> not_reached() const;
   std::string free_area_name() const;
@@ -65,6 +68,7 @@ class BatchJudge {
   std::set<std::string> known_before_;        // pits that had a record or that the design reached before the batch
   std::vector<Recorded> recorded_;
   std::vector<Revision> revisions_;
+  std::vector<std::string> cautions_;
   std::vector<NodeId> changed_;
 };
 

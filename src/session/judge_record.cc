@@ -21,10 +21,12 @@ void take(const Given<std::string>& given, std::string* field) {
   if (given) *field = given->value_or("");
 }
 
-// What stands before: the record that counts, or in a conflict the later head; nothing when there is none or it was withdrawn.
+// What stands before: in a conflict the later head, unless that withdraws; else the record that counts; nothing when there is none or it was
+// withdrawn.
 std::optional<PitRecord> standing(const PitEntry* entry) {
   if (!entry || entry->withdrawn()) return std::nullopt;
-  return entry->heads[entry->verdict.latest].record;
+  const PitRecord& latest = entry->heads[entry->verdict.latest].record;
+  return latest.status == PitStatus::kWithdrawn ? entry->record() : latest;
 }
 
 PitRecord blank(const SurveyModel& model) {
@@ -62,44 +64,75 @@ void take_time(const RecordPit& given, const SurveyModel& model, const WallTime&
   record->dug_at_defaulted = true;
 }
 
-bool any_find(const PitRecord& record) {
-  const bool counted = std::any_of(record.counts.begin(), record.counts.end(), [](auto count) { return count > 0; });
-  const bool weighed =
-      std::any_of(record.weights_g.begin(), record.weights_g.end(), [](auto grams) { return grams > 0.0; });
-  return counted || weighed;
+// "flint 2, pottery 1.5 g"; empty when nothing was found.
+std::string finds_in_words(const PitRecord& record, const std::vector<std::string>& finds) {
+  std::vector<std::string> words;
+  for (std::size_t i = 0; i < finds.size(); ++i) {
+    if (record.counts[i] > 0) words.push_back(finds[i] + " " + std::to_string(record.counts[i]));
+    if (record.weights_g[i] > 0.0) words.push_back(finds[i] + " " + format_trimmed(*record.weights_g[i], 3) + " g");
+  }
+  return join(words, ", ");
 }
 
-Status settle_place(const SurveyModel& model, const PitName& pit, const RecordPit& given, PitRecord* record) {
-  if (given.x || given.y) {
-    const auto x = given.x.value_or(std::nullopt);
-    const auto y = given.y.value_or(std::nullopt);
-    if (x.has_value() != y.has_value()) return bad(std::string(x ? "y" : "x") + ": missing; x and y go together");
-    record->place = x ? std::optional<Point>(Point{*x, *y}) : std::nullopt;
-  }
+Status take_place(const RecordPit& given, PitRecord* record) {
+  if (!given.x && !given.y) return ok_status();
+  const auto x = given.x.value_or(std::nullopt);
+  const auto y = given.y.value_or(std::nullopt);
+  if (x.has_value() != y.has_value()) return bad(std::string(x ? "y" : "x") + ": missing; x and y go together");
+  record->place = x ? std::optional<Point>(Point{*x, *y}) : std::nullopt;
+  return ok_status();
+}
+
+// A filled cell that says something else than the record would be lost in silence.
+Status nothing_else(const RecordPit& given, const PitRecord& record, const PitName& pit) {
+  RecordPit filled = given;
+  const auto drop_empty = [](auto& field) {
+    if (field && !*field) field.reset();
+  };
+  drop_empty(filled.reason), drop_empty(filled.crew), drop_empty(filled.started_at), drop_empty(filled.depth_cm);
+  drop_empty(filled.stop), drop_empty(filled.chosen_by), drop_empty(filled.x), drop_empty(filled.y);
+  drop_empty(filled.moved), drop_empty(filled.mesh_mm), drop_empty(filled.backfilled), drop_empty(filled.bag);
+  drop_empty(filled.note), drop_empty(filled.dug_at);
+  std::erase_if(filled.counts, [](const auto& count) { return !count.second; });
+  std::erase_if(filled.weights_g, [](const auto& grams) { return !grams.second; });
+  PitRecord changed = record;
+  take_fields(filled, &changed);
+  if (filled.dug_at) changed.dug_at = **filled.dug_at;
+  NEARPIT_TRY(take_place(filled, &changed));
+  if (changed == record) return ok_status();
+  return bad("status: 'withdrawn', but other cells of the row differ from the record of " + pit.label +
+             "; leave them empty, or correct the record first");
+}
+
+}  // namespace
+
+Status check_place(const SurveyModel& model, const PitName& pit, const PitRecord& record) {
   if (pit.node == kNoNode) {
-    if (!record->place) return bad("x: missing; a pit off the grid needs x and y, metres in the plan's coordinates");
+    if (!record.place) return bad("x: missing; a pit off the grid needs x and y, metres in the plan's coordinates");
     return ok_status();
   }
-  if (!record->place) {
-    if (!record->moved.empty())
-      return bad("moved: " + in_quotes(record->moved) + " needs x and y, where the pit was dug");
+  if (!record.place) {
+    if (!record.moved.empty())
+      return bad("moved: " + in_quotes(record.moved) + " needs x and y, where the pit was dug");
     return ok_status();
   }
-  const double away = distance_m(model.survey().ground().frame.ground(pit.node), *record->place);
+  const double away = distance_m(model.survey().ground().frame.ground(pit.node), *record.place);
   const double most = model.plan().max_move_m;
   if (away > most + kSamePlace_m) {
     return bad("x: " + pit.label + " was dug " + format_trimmed(away, 2) + " m from its place, legal: up to " +
                format_trimmed(most, 2) + " m; record a judgement pit under a label of its own, or this pit as not_dug");
   }
-  if (away > kSamePlace_m && record->moved.empty()) {
+  if (away > kSamePlace_m && record.moved.empty()) {
     return bad("moved: missing; " + pit.label + " was dug " + format_trimmed(away, 2) +
                " m from its place, say why (such as 'tree root')");
   }
   return ok_status();
 }
 
+namespace {
+
 // Each status with the fields that go with it.
-Status settle_status(const RecordPit& given, PitRecord* record) {
+Status settle_status(const SurveyModel& model, const PitName& pit, const RecordPit& given, PitRecord* record) {
   if (record->status == PitStatus::kDug) {
     if (given.reason && *given.reason) {
       return bad("reason: " + in_quotes(word(**given.reason)) + " goes with status not_dug only");
@@ -111,9 +144,9 @@ Status settle_status(const RecordPit& given, PitRecord* record) {
     return ok_status();
   }
   if (!record->reason) return bad("reason: missing; legal: " + all_not_dug_reasons());
-  if (any_find(*record)) {
-    return bad(
-        "status: 'not_dug' but finds are recorded for this pit; clear them with empty cells, or withdraw the record");
+  if (const std::string found = finds_in_words(*record, model.plan().finds); !found.empty()) {
+    return bad("status: 'not_dug', but " + pit.label + " has finds (" + found +
+               "); clear them with empty cells, or withdraw the record");
   }
   if (record->reason == NotDugReason::kOther && record->note.empty()) {
     return bad("note: missing; reason 'other' needs a note");
@@ -138,9 +171,15 @@ Result<PitRecord> new_record(const SurveyModel& model, const PitName& pit, const
   PitRecord record = before.value_or(blank(model));
   if (given.status) record.status = given.status->value_or(PitStatus::kDug);
   if (record.status == PitStatus::kWithdrawn) {
-    if (!before) return bad("status: 'withdrawn' but " + pit.label + " has no record; legal: dug, not_dug");
+    if (!before) {
+      return bad("status: 'withdrawn', but " + pit.label +
+                 (entry ? "'s record is withdrawn already" : " has no record") + "; legal: dug, not_dug");
+    }
     if (why.empty()) return bad("why: missing; say why the record of " + pit.label + " is withdrawn");
-    return record;
+    PitRecord kept = *before;
+    NEARPIT_TRY(nothing_else(given, kept, pit));
+    kept.status = PitStatus::kWithdrawn;
+    return kept;
   }
   take_fields(given, &record);
   take_time(given, model, now, &record);
@@ -149,8 +188,9 @@ Result<PitRecord> new_record(const SurveyModel& model, const PitName& pit, const
                " is no pit of the grid; if it was dug off the grid on judgement, say so with " +
                "chosen_by 'judgement' and x, y; if not, correct the label");
   }
-  NEARPIT_TRY(settle_place(model, pit, given, &record));
-  NEARPIT_TRY(settle_status(given, &record));
+  NEARPIT_TRY(take_place(given, &record));
+  NEARPIT_TRY(check_place(model, pit, record));
+  NEARPIT_TRY(settle_status(model, pit, given, &record));
   return record;
 }
 

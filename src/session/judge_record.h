@@ -14,6 +14,9 @@ namespace nearpit {
 Result<PitRecord> new_record(const SurveyModel& model, const PitName& pit, const RecordPit& given,
                              const std::string& why, const WallTime& now);
 
+// Whether a record's as-dug place goes with the pit: within max_move_m of its node, with `moved` saying why; off the grid a place must be there.
+Status check_place(const SurveyModel& model, const PitName& pit, const PitRecord& record);
+
 }  // namespace nearpit
 
 #endif  // NEARPIT_SESSION_JUDGE_RECORD_H_

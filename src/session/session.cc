@@ -30,6 +30,10 @@ Status take_objects(const std::string& path, LogFold& log, SurveyModel& model, s
   return ok_status();
 }
 
+std::string unremembered(const Error& error) {
+  return error.one_line() + "; the records are saved, but the next save will go on as a new writer";
+}
+
 struct ChosenWriter {
   WriterRow row;
   bool is_new = false;
@@ -50,6 +54,8 @@ Result<ChosenWriter> choose_writer(SurveyFile& file, const std::string& survey_i
         "it goes on as a new writer, and the copies can be merged later");
   }
   chosen.row.id = environment.new_id();
+  NEARPIT_ASSIGN(start, file.chain_start());
+  chosen.row.last_hash = std::move(start);
   chosen.row.device = environment.device;
   chosen.is_new = true;
   return chosen;
@@ -97,18 +103,24 @@ Result<Applied> Session::apply(const std::vector<Action>& actions) {
         transaction.update_layers(layer_changes(*model_, batch.changed_nodes(), batch.changed_objects()), maker.now()));
     const Status kept =
         environment_->memory.remember(survey_id_, {writer.row.id, writer.row.last_hash, maker.last_hash()});
-    if (!kept) applied.notes.push_back(kept.error().lines.front());
-    return transaction.commit();
+    if (!kept) applied.notes.push_back(unremembered(kept.error()));
+    NEARPIT_ASSIGN(last, file_.last_rowid());
+    NEARPIT_TRY(transaction.commit());
+    last_rowid_ = last;
+    return ok_status();
   };
   if (const Status written = write_all(); !written) {
     batch.take_back();
     return written.error();
   }
+  // The records are on the disk: nothing from here on may say otherwise.
+  const Status kept = environment_->memory.remember(survey_id_, {writer.row.id, maker.last_hash(), maker.last_hash()});
+  if (!kept && applied.notes.empty()) applied.notes.push_back(unremembered(kept.error()));
   for (const Revision& revision : batch.revisions())
     log_.add(revision);
   log_.take_changed();  // the model holds them already
-  NEARPIT_ASSIGN(last, file_.last_rowid());
-  last_rowid_ = last;
+  for (const std::string& caution : batch.cautions())
+    applied.notes.push_back(caution);
   return applied;
 }
 

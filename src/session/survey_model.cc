@@ -63,6 +63,10 @@ Result<PitName> SurveyModel::name_of(std::string_view text) const {
                                            label(0) + ", or a free label of 1 to " + std::to_string(kLongestFreeLabel) +
                                            " characters for a judgement pit off the grid");
   }
+  // One pit, whichever case somebody writes it in.
+  for (const auto& [label, entry] : survey_.off_grid_pits()) {
+    if (fold_case(label) == fold_case(text)) return PitName{kNoNode, pit_object(label), label};
+  }
   return PitName{kNoNode, pit_object(std::string(text)), std::string(text)};
 }
 
@@ -96,6 +100,11 @@ Status SurveyModel::set_object(const std::string& object, const std::vector<LogH
     }
     NEARPIT_ASSIGN(area, closed_area_of(latest(heads).body));
     add(survey_.set_closed_area(object, std::move(area)));
+  } else if (is_stop_object(object) && !heads.empty()) {
+    NEARPIT_ASSIGN(stop, stop_work_of(latest(heads).body));
+    add(survey_.set_stop_work(object, std::move(stop)));
+  } else {
+    return Error(ErrorKind::kTooNew, "a later Nearpit wrote it; use that one");
   }
   return ok_status();
 }

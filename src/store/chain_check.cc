@@ -17,13 +17,13 @@ constexpr const char* kIncomplete = "take in the copy of the device that wrote i
 
 class ChainReader {
  public:
-  explicit ChainReader(Findings& findings) : findings_(findings) {}
+  ChainReader(std::string start, Findings& findings) : start_(std::move(start)), findings_(findings) {}
 
   void take(const Revision& revision) {
     if (revision.writer != writer_) {
       writer_ = revision.writer;
       seq_ = 0;
-      hash_.clear();
+      hash_ = start_;
     }
     const std::string where = "revision " + std::to_string(revision.seq) + " of writer " + in_quotes(writer_);
     const bool in_sequence = revision.seq == seq_ + 1;
@@ -35,7 +35,8 @@ class ChainReader {
     if (in_sequence && chain_hash(hash_, revision) != revision.hash) {
       findings_.add({"chain", where,
                      "its SHA-256 is not that of its content and of the revision before it (object " +
-                         in_quotes(revision.object) + ")",
+                         in_quotes(revision.object) + ")" +
+                         (revision.seq == 1 ? ", or the plan or the drawn first sample was changed" : ""),
                      kTampered});
     }
     seq_ = revision.seq;
@@ -53,6 +54,7 @@ class ChainReader {
   }
 
  private:
+  std::string start_;
   Findings& findings_;
   std::string writer_;
   std::string hash_;
@@ -63,8 +65,8 @@ class ChainReader {
 
 }  // namespace
 
-void check_chain(Connection& db, Findings& findings) {
-  ChainReader reader(findings);
+void check_chain(Connection& db, const std::string& start, Findings& findings) {
+  ChainReader reader(start, findings);
   const Status read =
       each_revision(db, "WHERE number > ?1 ORDER BY writer, seq", 0, [&](std::int64_t, Revision&& revision) {
         reader.take(revision);

@@ -73,7 +73,12 @@ std::vector<FileProblem> check_file(SurveyFile& file) {
   }
   check_schema(db, findings);
   findings.move_to(problems, "schema", "tables");
-  check_chain(db, findings);
+  const Result<std::string> start = file.chain_start();
+  if (start) {
+    check_chain(db, *start, findings);
+  } else {
+    findings.add({"chain", "nearpit_survey", start.error().one_line(), kUseCopy});
+  }
   findings.move_to(problems, "chain", "nearpit_revision");
   return problems;
 }

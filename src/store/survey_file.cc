@@ -123,6 +123,25 @@ Result<std::vector<std::vector<UnitId>>> SurveyFile::drawn(std::size_t areas) {
   }
 }
 
+Result<std::string> SurveyFile::chain_start() {
+  NEARPIT_ASSIGN(survey_id, this->survey_id());
+  NEARPIT_ASSIGN(plan, this->plan());
+  std::size_t areas = 0;
+  Statement last(handle_->db, "SELECT coalesce(max(area) + 1, 0) FROM nearpit_drawn");
+  NEARPIT_ASSIGN(row, last.next());
+  if (row) areas = static_cast<std::size_t>(std::clamp<std::int64_t>(last.integer(0), 0, kMostAreas));
+  NEARPIT_ASSIGN(units, drawn(areas));
+  return start_hash(survey_id, plan, units);
+}
+
+Status SurveyFile::read_as_one(const std::function<Status()>& reads) {
+  Connection& db = handle_->db;
+  NEARPIT_TRY(db.run("BEGIN"));
+  const Status done = reads();
+  const Status ended = db.run("ROLLBACK");  // nothing was written
+  return done ? ended : done;
+}
+
 Status SurveyFile::each_revision(std::int64_t after,
                                  const std::function<Status(std::int64_t rowid, Revision&&)>& take) {
   return store::each_revision(handle_->db, "WHERE number > ?1 ORDER BY number", after, take);
@@ -139,7 +158,8 @@ Result<std::optional<WriterRow>> SurveyFile::writer(const std::string& id) {
   writer.add(id);
   NEARPIT_ASSIGN(known, writer.next());
   if (!known) return std::optional<WriterRow>();
-  WriterRow found{id, writer.text(0), 0, ""};
+  NEARPIT_ASSIGN(start, chain_start());
+  WriterRow found{id, writer.text(0), 0, std::move(start)};
   Statement last(handle_->db, "SELECT seq, hash FROM nearpit_revision WHERE writer = ?1 ORDER BY seq DESC LIMIT 1");
   last.add(id);
   NEARPIT_ASSIGN(wrote, last.next());

@@ -38,7 +38,7 @@ struct WriterRow {
   std::string id;
   std::string device;  // name of the machine
   std::int64_t last_seq = 0;
-  std::string last_hash;  // "" before its first revision
+  std::string last_hash;  // of its last revision; the chain's start before its first
 };
 
 class SurveyFile {
@@ -55,11 +55,16 @@ class SurveyFile {
   Result<std::string> survey_id();
   Result<std::string> plan();
   Result<std::vector<std::vector<UnitId>>> drawn(std::size_t areas);
+  // What every writer's chain begins with (record/revision.h).
+  Result<std::string> chain_start();
 
   // All revisions in the order in which this file took them (rowid). From rowid `after` on; 0 for all.
   Status each_revision(std::int64_t after, const std::function<Status(std::int64_t rowid, Revision&&)>& take);
   Result<std::int64_t> last_rowid();
   Result<std::optional<WriterRow>> writer(const std::string& id);
+
+  // Runs `reads` on one state of the file, whatever other processes write meanwhile.
+  Status read_as_one(const std::function<Status()>& reads);
 
   // One write transaction (BEGIN IMMEDIATE; waits up to 5 s for another process). Rolls back unless committed.
   class Transaction {

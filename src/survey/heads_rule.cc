@@ -36,9 +36,11 @@ HeadsVerdict judge_heads(const std::vector<Head>& heads, const PositiveRule& rul
     if (later(i, verdict.latest)) verdict.latest = i;
     if (own == 3) ++positives;
   }
-  const bool all_equal = std::all_of(heads.begin(), heads.end(), [&](const Head& head) {
-    return equal_but_for_default_time(head.record, heads.front().record);
-  });
+  bool all_equal = true;
+  for (const Head& head : heads) {
+    for (const Head& other : heads)
+      all_equal = all_equal && equal_but_for_default_time(head.record, other.record);
+  }
   if (all_equal) return verdict;
   verdict.conflict = positives == 0 || positives == heads.size() ? Conflict::kSameOutcome : Conflict::kOutcome;
   return verdict;

@@ -10,7 +10,6 @@ void count_entry(const PitEntry& entry, const PositiveRule& rule, Progress* prog
   progress->withdrawn += entry.withdrawn() ? 1u : 0u;
   progress->positive += rule.positive(record) ? 1u : 0u;
   progress->conflicts += entry.verdict.conflict != Conflict::kNone ? 1u : 0u;
-  progress->outcome_conflicts += entry.verdict.conflict == Conflict::kOutcome ? 1u : 0u;
 }
 
 void count_first_sample(const Survey& survey, Progress* progress) {
@@ -44,10 +43,13 @@ Progress progress_of(const Survey& survey) {
   for (const auto& [id, entry] : survey.pits()) {
     count_entry(entry, rule, &progress);
     const bool first = survey.ground().sample.holds[static_cast<std::size_t>(id)];
-    if (first && entry.verdict.conflict == Conflict::kOutcome) ++progress.first_sample_open;
+    const bool outcome = entry.verdict.conflict == Conflict::kOutcome;
+    if (outcome && list.in_design(id)) ++progress.outcome_conflicts;
+    if (outcome && first) ++progress.first_sample_open;
     if (entry.withdrawn() || list.in_design(id)) continue;
     ++progress.judgement;
-    if (entry.record().chosen_by != ChosenBy::kJudgement) ++progress.no_longer_required;
+    const ChosenBy chosen = entry.record().chosen_by;
+    if (chosen != ChosenBy::kJudgement && chosen != ChosenBy::kAsked) ++progress.no_longer_required;
   }
   for (const auto& [label, entry] : survey.off_grid_pits()) {
     count_entry(entry, rule, &progress);

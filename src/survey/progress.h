@@ -17,13 +17,14 @@ struct Progress {
   std::size_t judgement = 0;         // recorded pits that the design does not reach
   std::size_t due = 0;
   std::size_t halted = 0;
-  std::size_t no_longer_required = 0;  // those of `judgement` that are on the grid and that nobody called judgement
+  std::size_t no_longer_required =
+      0;  // those of `judgement` that are on the grid and that nobody called judgement or asked for
   std::size_t withdrawn = 0;
   std::size_t conflicts = 0;
   std::size_t access_refused = 0;  // design pits not dug for an access reason
   std::size_t first_sample_open =
       0;  // first-sample pits due, halted or in a conflict that could change what is positive
-  std::size_t outcome_conflicts = 0;  // conflicts that could change what is positive
+  std::size_t outcome_conflicts = 0;  // conflicts on design pits that could change what is positive
   bool complete = false;              // the first sample recorded; nothing due, halted, in conflict or refused
   bool truncated = false;             // the ring limit kept a pit off
 };
