@@ -93,6 +93,12 @@ class Rows {
   double cell_area() const { return survey_->ground().frame.lattice().cell_area_m2(); }
   double found_per_node(std::size_t variable) const { return met_->found[variable] / nodes(); }
 
+  // Positive pits: each dug pit that is not positive is one that can't be.
+  double most_positive_per_node() const {
+    const double positive = met_->found.back();
+    return 1 - (met_->dug - positive) / nodes();
+  }
+
   void fill_size(const Measured& measured, bool on_ground, Estimate* row) const {
     row->mean_per_pit = measured.moments.mean;
     row->total = row->mean_per_pit * nodes();
@@ -109,13 +115,16 @@ class Rows {
     }
     row->variance_of_mean = variance;
     if (!variance) return;
-    if (*variance >= 0) row->standard_error = std::sqrt(*variance);
+    if (*variance >= 0 && !spread_is_unjudged(row->mean_per_pit, *variance, met_->design.census())) {
+      row->standard_error = std::sqrt(*variance);
+    }
     std::string reason;
     row->range = plain_t_range({.mean = row->mean_per_pit,
                                 .variance = variance,
                                 .nu = measured.nu,
                                 .level = settings_->confidence,
                                 .found_per_node = found_per_node(variable),
+                                .most_per_node = row->per_m2 ? std::nullopt : std::optional(most_positive_per_node()),
                                 .census = met_->design.census()},
                                &reason);
     add_reason(&row->why, reason);
@@ -135,6 +144,7 @@ class Rows {
                                        .nu = census ? std::optional(nodes() - 1) : measured.nu,
                                        .level = settings_->confidence,
                                        .found_per_node = found_per_node(variable) / cell_area(),
+                                       .most_per_node = std::nullopt,
                                        .census = false},
                                       &reason);
     add_reason(&row->why, reason);

@@ -3,6 +3,7 @@
 #include <algorithm>
 #include <boost/math/distributions/students_t.hpp>
 #include <cmath>
+#include <limits>
 
 namespace nearpit {
 namespace {
@@ -37,19 +38,24 @@ double t_factor(double level, double nu) {
   return boost::math::quantile(boost::math::complement(distribution, (1 - level) / 2));
 }
 
+bool spread_is_unjudged(double mean, double variance, bool census) {
+  return !census && variance >= 0 && variance <= 1e-18 * mean * mean;
+}
+
 std::optional<LikelyRange> plain_t_range(const RangeInput& input, std::string* why) {
   if (!input.variance) return refused("no spread can be given", why);
   const double variance = *input.variance;
   if (variance < 0) return refused("the variance estimate came out negative; use Hansen-Hurwitz", why);
+  if (input.mean == 0) return refused("nothing found by the sample: no range of this kind can be given", why);
   if (input.census) {
     return LikelyRange{.level = input.level, .lower = input.mean, .upper = input.mean, .method = "every unit drawn"};
   }
-  if (input.mean == 0) return refused("nothing found by the sample: no range of this kind can be given", why);
-  if (variance <= 1e-18 * input.mean * input.mean || !input.nu) return refused(kSameValue, why);
+  if (spread_is_unjudged(input.mean, variance, input.census) || !input.nu) return refused(kSameValue, why);
+  const double most = input.most_per_node.value_or(std::numeric_limits<double>::infinity());
   const double reach = t_factor(input.level, *input.nu) * std::sqrt(variance);
   return LikelyRange{.level = input.level,
                      .lower = std::max(input.mean - reach, input.found_per_node),
-                     .upper = std::max(input.mean + reach, input.found_per_node),
+                     .upper = std::max(std::min(input.mean + reach, most), input.found_per_node),
                      .method = "plain t"};
 }
 

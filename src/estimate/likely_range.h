@@ -24,15 +24,19 @@ std::optional<double> degrees_of_freedom(const std::vector<StratumPart>& parts);
 // Quantile of Student's t (Boost.Math): the two-sided level's factor.
 double t_factor(double level, double nu);
 
+// Every drawn unit carries the same value though not all were drawn (v <= 1e-18 mean^2): no standard error and no range can be given.
+bool spread_is_unjudged(double mean, double variance, bool census);
+
 struct RangeInput {
   double mean = 0;
   std::optional<double> variance;
   std::optional<double> nu;
   double level = 0.95;
   double found_per_node = 0;  // what was found over all dug nodes, per node of the frame: no range lies below it
+  std::optional<double> most_per_node;  // what it can be at the most: for 0/1, 1 less the share of nodes dug and found empty
   bool census = false;        // every unit drawn
 };
-// mean +- t sqrt(v), never below what was found. Nothing, with the reason in `why`, when the variance is missing or negative, the estimate is 0, or every
+// mean +- t sqrt(v), never below what was found nor above what is possible. Nothing, with the reason in `why`, when the variance is missing or negative, the estimate is 0, or every
 // drawn unit carries the same value.
 std::optional<LikelyRange> plain_t_range(const RangeInput& input, std::string* why);
 

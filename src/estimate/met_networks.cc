@@ -89,6 +89,7 @@ MetNetworks met_networks(const Survey& survey, const std::vector<Network>& clust
   for (const NodeId id : dug_nodes(survey)) {
     const PitRecord& record = survey.pit(id)->record();
     const std::vector<double> values = values_of(record, ground.positive, finds);
+    ++met.dug;
     for (std::size_t variable = 0; variable < variables; ++variable)
       met.found[variable] += values[variable];
     if (!ground.sample.holds[index(id)]) continue;

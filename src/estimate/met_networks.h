@@ -31,6 +31,7 @@ struct MetNetworks {
   std::vector<NetworkTotals> totals;      // by variable
   std::vector<MetNetwork> own_units;      // in the order of design.drawn
   std::vector<NetworkTotals> own_totals;  // by variable, of all pits of the unit
+  double dug = 0;                         // pits of the frame that were dug, judgement pits too
   std::vector<double> found;              // by variable, over all dug pits of the frame, judgement pits too
 };
 

@@ -186,10 +186,23 @@ class Survey:
                 "total": float(estimate.mean * len(self.frame.nodes)) if pits
                 else per_m2 * len(self.frame.nodes) * self.frame.cell_m2(),
                 "variance_of_mean": variance,
-                "standard_error": None if variance is None or variance < 0 else math.sqrt(variance),
-                "plain_t": self.plain_t(estimate.mean, variance, parts, Fraction(found, len(self.frame.nodes))),
-                "ground_standard_error": None if pits else self.ground_standard_error(estimate.mean, variance, mean_square),
+                "standard_error": None if self.no_spread(estimate.mean, variance) else math.sqrt(variance),
+                "plain_t": self.plain_t(estimate.mean, variance, parts, Fraction(found, len(self.frame.nodes)),
+                                        self.most_positive() if pits else None),
+                "ground_standard_error": None if pits or self.no_spread(estimate.mean, variance) else self.ground_standard_error(estimate.mean, variance, mean_square),
                 "status": self.status(estimator)}
+
+    def no_spread(self, mean, variance):
+        """No variance, a negative one, or every drawn unit alike though not all were drawn (statistics: v <= 1e-18 est^2)."""
+        if variance is None or variance < 0:
+            return True
+        return not all(s.taken_whole for s in self.strata) and variance <= Fraction(1, 10 ** 18) * mean ** 2
+
+    def most_positive(self):
+        """The share of nodes that can be positive at the most: those not dug and found empty."""
+        dug = [node for node in self.frame.nodes if self.records.dug(node)]
+        empty = sum(1 for node in dug if not self.value("positive pits", node))
+        return 1 - Fraction(empty, len(self.frame.nodes))
 
     def ground_standard_error(self, mean, variance, mean_square):
         """Of per_m2: S2 = N/(N-1) [mean(y^2) - (mean^2 - v)], not below 0, and v_ground = v + S2/N."""
@@ -199,8 +212,8 @@ class Survey:
         spread = max(Fraction(0), Fraction(size, size - 1) * (mean_square - mean ** 2 + variance))
         return math.sqrt(variance + spread / size) / self.frame.pit_m2()
 
-    def plain_t(self, mean, variance, parts, at_least):
-        """The plain t interval, or None; neither end below what was found already."""
+    def plain_t(self, mean, variance, parts, at_least, at_most=None):
+        """The plain t interval, or None; neither end below what was found already nor above what is possible."""
         if variance is None or variance < 0 or mean == 0:
             return None
         if all(s.taken_whole for s in self.strata):
@@ -210,7 +223,10 @@ class Survey:
         else:
             level = self.plan.get("confidence", 0.95)
             half = t_two_sided(level, degrees_of_freedom(self.strata, parts)) * math.sqrt(variance)
-        return [max(float(mean) - half, float(at_least)), max(float(mean) + half, float(at_least))]
+        upper = float(mean) + half
+        if at_most is not None and half:
+            upper = min(upper, float(at_most))
+        return [max(float(mean) - half, float(at_least)), max(upper, float(at_least))]
 
     def tally(self):
         return {"frame": {"pits": len(self.frame.nodes), "area_m2": len(self.frame.nodes) * self.frame.cell_m2(),
