@@ -91,8 +91,10 @@ Given<std::uint32_t> PitCells::count(std::size_t field, const std::string& colum
       trimmed(row_.fields[field]), [&](std::string_view cell) -> std::optional<std::uint32_t> {
         const auto number = parse_double(cell);
         const auto whole = number ? whole_in(*number) : std::nullopt;
-        if (whole && *whole >= 0 && *whole <= kMostCount) return static_cast<std::uint32_t>(*whole);
+        const bool exponent = cell.find_first_of("eE") != std::string_view::npos;  // 1e3: digits may have been lost
+        if (whole && !exponent && *whole >= 0 && *whole <= kMostCount) return static_cast<std::uint32_t>(*whole);
         const std::string wrong = !number                                     ? " is not a number"
+                                  : exponent                                  ? " is written with an exponent"
                                   : *number < 0                               ? " is below zero"
                                   : *number > static_cast<double>(kMostCount) ? " is too large"
                                                                               : " is not a whole number";

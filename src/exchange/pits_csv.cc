@@ -4,6 +4,7 @@
 #include <utility>
 
 #include "base/clock.h"
+#include "base/numbers.h"
 #include "base/text.h"
 #include "exchange/csv_table.h"
 #include "exchange/pit_cells.h"
@@ -47,7 +48,8 @@ void clear_zeros(const std::string& prefix, const Plan& plan, const PitCells& ce
                  std::map<std::size_t, std::optional<T>>* values) {
   for (auto& [find, value] : *values) {
     if (value && *value > T{0}) {
-      cells.refuse(prefix + plan.finds[find], "holds a find, but status is not_dug; clear it or write status dug");
+      cells.refuse(prefix + plan.finds[find], in_quotes(format_trimmed(static_cast<double>(*value), 6)) +
+                                                  " doesn't go with status not_dug; clear it or write status dug");
     }
     value.reset();
   }
@@ -93,7 +95,8 @@ void check_row(const Plan& plan, const PitCells& cells, RecordPit* record) {
     }
   }
   const bool x = cells.filled(PitColumn::kX);
-  if (x != cells.filled(PitColumn::kY)) cells.refuse(x ? PitColumn::kY : PitColumn::kX, "missing; x and y go together");
+  const PitColumn other = x ? PitColumn::kY : PitColumn::kX;
+  if (x != cells.filled(PitColumn::kY) && cells.cleared(other)) cells.refuse(other, "missing; x and y go together");
 }
 
 void read_finds(const PitsColumns& columns, const Plan& plan, const PitCells& cells, RecordPit* record) {

@@ -17,10 +17,10 @@
 
 namespace nearpit {
 
-// Where an action came from, for error lines. Both empty when it came from no file.
+// Where an action came from, for error lines. The place is empty when it came from no file.
 struct Origin {
-  std::string place;  // "PITS.csv:7", "ACTION.json:3"
-  int line = 0;       // the 7 or 3
+  std::string place;  // the file's name as it was given: "PITS.csv", "ACTION.json"
+  int line = 0;       // of the row or action, counted from 1
 };
 
 // A field that was given: a value, or empty to clear it. A field not given keeps its value (new records: its default).
@@ -73,7 +73,7 @@ struct ReopenArea {
 };
 struct Action {
   std::variant<RecordPit, WithdrawPit, BelongsTo, AskNeighbours, CloseArea, ReopenArea> what;
-  std::string by;   // who says so; may be empty for rows of a table
+  std::string by;  // who says so; may be empty for rows of a table
   std::string why;
   Origin origin;
 };

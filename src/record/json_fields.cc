@@ -163,7 +163,7 @@ bool NumberRange::holds(double value) const {
 }
 
 std::string NumberRange::in_words() const {
-  const auto written = [](double end) { return format_significant(end, 12); };
+  const auto written = [](double end) { return format_trimmed(end, 9); };
   const std::string from = (above_low ? "above " : "from ") + written(low);
   const std::string to = below_high ? "to below " : above_low ? "and up to " : "to ";
   return "a number " + from + " " + to + written(high);

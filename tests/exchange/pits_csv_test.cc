@@ -187,7 +187,7 @@ TEST(PitsCsv, Counts) {
   EXPECT_THAT(errors_in("find:pottery", "two"), ElementsAre("P.csv:2: find:pottery: \"two\" is not a number" + legal));
   EXPECT_THAT(errors_in("find:pottery", "1000001"),
               ElementsAre("P.csv:2: find:pottery: \"1000001\" is too large" + legal));
-  for (const std::string cell : {"1e30", "nan", "inf", "0x10", "+3", "1 2", "99999999999999999999"})
+  for (const std::string cell : {"1e3", "1E+03", "1e30", "nan", "inf", "0x10", "+3", "1 2", "99999999999999999999"})
     EXPECT_THAT(errors_in("find:pottery", cell), SizeIs(1)) << cell;
 }
 
@@ -261,8 +261,8 @@ TEST(PitsCsv, NotDugNeedsAReasonAndHasNoFinds) {
       errors_of(header + "T1-1,not_dug,slope,40,bedrock,2,1.5,\n"),
       ElementsAre("P.csv:2: depth_cm: \"40\" doesn't go with status not_dug; clear it or write status dug",
                   "P.csv:2: stop: \"bedrock\" doesn't go with status not_dug; clear it or write status dug",
-                  "P.csv:2: find:pottery: holds a find, but status is not_dug; clear it or write status dug",
-                  "P.csv:2: weight:pottery: holds a find, but status is not_dug; clear it or write status dug"));
+                  "P.csv:2: find:pottery: \"2\" doesn't go with status not_dug; clear it or write status dug",
+                  "P.csv:2: weight:pottery: \"1.5\" doesn't go with status not_dug; clear it or write status dug"));
   EXPECT_THAT(errors_of(header + "T1-1,not_dug,rain,,,,,\n"), SizeIs(1)) << "said once";
   EXPECT_EQ(record_of(header + "T1-1,not_dug,slope,,,0,0,\n").counts.at(1), std::nullopt) << "zero is as good as empty";
   EXPECT_THAT(errors_of("pit,status\nT1-1,not_dug\n"), IsEmpty()) << "the record may have its reason already";
