@@ -2,7 +2,9 @@
 #include <cstdio>
 #include <new>
 #include <string>
+#include <vector>
 
+#include "base/text.h"
 #include "cli/act_command.h"
 #include "cli/check_command.h"
 #include "cli/log_command.h"
@@ -12,14 +14,26 @@
 
 namespace {
 
+// What stands where a command should.
+std::string no_command(const CLI::App& program) {
+  std::vector<std::string> commands;
+  for (const CLI::App* command : program.get_subcommands([](const CLI::App*) { return true; }))
+    commands.push_back(command->get_name());
+  const std::vector<std::string> found = program.remaining();
+  return (found.empty() ? "no command" : nearpit::in_quotes(found.front()) + " is no command") +
+         "; legal: " + nearpit::join(commands, ", ");
+}
+
 // One line, and exit 2: wrong usage. Asking for help or the version is none.
 int usage_error(const CLI::App& program, const CLI::ParseError& error) {
   if (error.get_exit_code() == static_cast<int>(CLI::ExitCodes::Success)) return program.exit(error);
-  std::string line = error.what();
+  const std::vector<CLI::App*> commands = program.get_subcommands();
+  const std::string command = commands.empty() ? "nearpit" : "nearpit " + commands.front()->get_name();
+  std::string line = commands.empty() ? no_command(program) : error.what();
   for (char& letter : line) {
     if (letter == '\n') letter = ' ';
   }
-  std::fprintf(stderr, "nearpit: %s; see 'nearpit --help'\n", line.c_str());
+  std::fprintf(stderr, "%s: %s; see '%s --help'\n", command.c_str(), line.c_str(), command.c_str());
   return nearpit::cli::kWrongUsage;
 }
 

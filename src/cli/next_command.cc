@@ -116,8 +116,8 @@ void add_next(CLI::App& program, Run* run) {
   auto options = std::make_shared<NextOptions>();
   CLI::App* command = program.add_subcommand("next", "pits to dig, in walking order, with why");
   add_file(command, &options->file);
-  command->add_option("--crew", options->crew, "start where this crew dug last");
-  command->add_option("--from", options->from, "start at X,Y (metres) or at a pit");
+  command->add_option("--crew", options->crew, "start where this crew dug last")->type_name("NAME");
+  command->add_option("--from", options->from, "start at X,Y (metres) or at a pit")->type_name("PLACE");
   command->add_flag("--json", options->json, "one JSON object");
   command->callback([options, run] { *run = [options] { return run_next(*options); }; });
 }

@@ -2,6 +2,8 @@
 
 #include <memory>
 
+#include "base/clock.h"
+#include "base/text.h"
 #include "cli/tally_json.h"
 #include "cli/tally_text.h"
 #include "session/session.h"
@@ -32,7 +34,11 @@ void add_tally(CLI::App& program, Run* run) {
   auto options = std::make_shared<TallyOptions>();
   CLI::App* command = program.add_subcommand("tally", "the day's figures");
   add_file(command, &options->file);
-  command->add_option("--day", options->day, "only records written up to this day (2026-05-04)");
+  command->add_option("--day", options->day, "only records written up to this day (2026-05-04)")
+      ->type_name("DATE")
+      ->check([](const std::string& day) {
+        return is_date(day) ? std::string() : in_quotes(day) + " is no date; legal: a day such as 2026-05-04";
+      });
   command->add_flag("--json", options->json, "one JSON object");
   command->callback([options, run] { *run = [options] { return run_tally(*options); }; });
 }
