@@ -23,8 +23,9 @@ int run_act(const ActOptions& options) {
   for (const std::string& line : applied->notes)
     note(line);
   const Progress progress = progress_of(session->model().survey());
-  return print("Done: " + std::to_string(applied->actions) + (applied->actions == 1 ? " action; " : " actions; ") +
-               std::to_string(progress.due) + " pits to dig\n");
+  return print_saved("Done: " + std::to_string(applied->actions) +
+                     (applied->actions == 1 ? " action; " : " actions; ") + std::to_string(progress.due) +
+                     (progress.due == 1 ? " pit to dig\n" : " pits to dig\n"));
 }
 
 }  // namespace

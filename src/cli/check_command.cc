@@ -44,19 +44,17 @@ int not_opened(const Error& error, const CheckOptions& options) {
 int run_check(const CheckOptions& options) {
   auto environment = real_environment();
   if (!environment) return fail(environment.error());
-  auto session = Session::open(options.file, *environment, true);
-  if (!session) return not_opened(session.error(), options);
-  const CheckReport report = session->check();
-  const std::vector<std::string> lines = lines_of(report, options.file);
+  const auto report = check_survey(options.file, *environment);
+  if (!report) return not_opened(report.error(), options);
+  const std::vector<std::string> lines = lines_of(*report, options.file);
   if (options.json) {
-    const int printed = print_json(as_json(report));
+    const int printed = print_json(as_json(*report));
     if (printed != kDone) return printed;
   }
-  if (!report.whole) return fail(Error(ErrorKind::kDamaged, lines), options.all_errors);
+  if (!report->whole) return fail(Error(ErrorKind::kDamaged, lines), options.all_errors);
   if (options.json) return kDone;
-  std::string text =
-      "Whole: yes (" + std::to_string(session->revision()) + " revisions, every chain and layer checked)\n";
-  text += report.complete ? "Complete: yes\n" : "Complete: no\n";
+  std::string text = "Whole: yes (every record's chain and every layer checked)\n";
+  text += report->complete ? "Records: every field that the plan requires is filled\n" : "Records: not complete\n";
   for (const std::string& line : lines)
     text += "  " + line + "\n";
   return print(text);

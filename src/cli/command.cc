@@ -2,11 +2,13 @@
 
 #include <cstdio>
 
+#include "base/text.h"
+
 namespace nearpit::cli {
 
 CLI::Option* add_file(CLI::App* command, std::string* file) {
   return command->add_option("FILE", *file, "the survey file (.gpkg)")->required()->check([](const std::string& text) {
-    return text.ends_with(".gpkg") ? std::string() : "FILE must end in .gpkg, not '" + text + "'";
+    return text.ends_with(".gpkg") ? std::string() : in_quotes(text) + " doesn't end in .gpkg";
   });
 }
 
@@ -23,6 +25,11 @@ int fail(const Error& error, bool all_errors) {
 int print(const std::string& text) {
   const bool written = std::fwrite(text.data(), 1, text.size(), stdout) == text.size() && std::fflush(stdout) == 0;
   return written ? kDone : fail(Error(ErrorKind::kIo, "standard output can't be written"));
+}
+
+int print_saved(const std::string& text) {
+  if (std::fwrite(text.data(), 1, text.size(), stdout) == text.size() && std::fflush(stdout) == 0) return kDone;
+  return fail(Error(ErrorKind::kIo, "everything is saved; only standard output can't be written"));
 }
 
 int print_json(const Json& json) { return print(json.dump(2) + "\n"); }

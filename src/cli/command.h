@@ -26,6 +26,8 @@ CLI::Option* add_file(CLI::App* command, std::string* file);
 int fail(const Error& error, bool all_errors = false);
 // Everything at once on standard output; a full disk or closed pipe behind it is a failure.
 int print(const std::string& text);
+// The same where the work is saved already: a failure says so.
+int print_saved(const std::string& text);
 int print_json(const Json& json);
 // A line that begins "note: ", on standard error.
 void note(const std::string& text);

@@ -23,7 +23,8 @@ int run_log(const LogOptions& options) {
   for (const std::string& line : applied->notes)
     note(line);
   const Progress progress = progress_of(session->model().survey());
-  return print("Saved " + std::to_string(applied->revisions) + " pits; " + std::to_string(progress.due) + " to dig\n");
+  const std::string pits = applied->revisions == 1 ? " pit; " : " pits; ";
+  return print_saved("Saved " + std::to_string(applied->revisions) + pits + std::to_string(progress.due) + " to dig\n");
 }
 
 }  // namespace

@@ -34,7 +34,7 @@ int run_new(const NewOptions& options) {
   if (!made) return fail(made.error(), options.all_errors);
   for (const std::string& warning : made->warnings)
     note(warning);
-  return print(summary(*made, options.file));
+  return print_saved(summary(*made, options.file));
 }
 
 }  // namespace

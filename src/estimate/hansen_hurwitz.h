@@ -19,7 +19,8 @@ namespace nearpit {
 Moments hansen_hurwitz(const SampleDesign& design, std::span<const MetNetwork> networks, std::span<const double> y);
 
 // W_hi of every drawn unit, in the order of design.drawn.
-std::vector<double> unit_values(const SampleDesign& design, std::span<const MetNetwork> networks, std::span<const double> y);
+std::vector<double> unit_values(const SampleDesign& design, std::span<const MetNetwork> networks,
+                                std::span<const double> y);
 
 }  // namespace nearpit
 

@@ -20,7 +20,8 @@ namespace nearpit {
 Moments horvitz_thompson(const SampleDesign& design, std::span<const MetNetwork> networks, std::span<const double> y);
 
 // The mean alone. Cost: networks.
-double horvitz_thompson_mean(const SampleDesign& design, std::span<const MetNetwork> networks, std::span<const double> y);
+double horvitz_thompson_mean(const SampleDesign& design, std::span<const MetNetwork> networks,
+                             std::span<const double> y);
 
 // alpha_k of one network, in (0, 1].
 double inclusion_chance(const SampleDesign& design, const MetNetwork& network);

@@ -33,8 +33,9 @@ struct RangeInput {
   std::optional<double> nu;
   double level = 0.95;
   double found_per_node = 0;  // what was found over all dug nodes, per node of the frame: no range lies below it
-  std::optional<double> most_per_node;  // what it can be at the most: for 0/1, 1 less the share of nodes dug and found empty
-  bool census = false;        // every unit drawn
+  std::optional<double>
+      most_per_node;    // what it can be at the most: for 0/1, 1 less the share of nodes dug and found empty
+  bool census = false;  // every unit drawn
 };
 // mean +- t sqrt(v), never below what was found nor above what is possible. Nothing, with the reason in `why`, when the variance is missing or negative, the estimate is 0, or every
 // drawn unit carries the same value.

@@ -9,15 +9,16 @@
 namespace nearpit {
 
 struct StratumPart {
-  double variance = 0;    // v_h, of the mean per node
+  double variance = 0;  // v_h, of the mean per node
   std::uint32_t drawn = 0;
-  bool census = false;    // n_h = N_h
+  bool census = false;  // n_h = N_h
 };
 
 struct Moments {
-  double mean = 0;                  // per node of the frame
-  std::optional<double> variance;   // of the mean; design-unbiased, may be negative for Horvitz-Thompson; nothing: not estimable
-  std::vector<StratumPart> parts;   // Hansen-Hurwitz only, by stratum; empty when the variance is not estimable
+  double mean = 0;  // per node of the frame
+  std::optional<double>
+      variance;  // of the mean; design-unbiased, may be negative for Horvitz-Thompson; nothing: not estimable
+  std::vector<StratumPart> parts;  // Hansen-Hurwitz only, by stratum; empty when the variance is not estimable
 };
 
 }  // namespace nearpit

@@ -33,8 +33,8 @@ struct SampleDesign {
   std::uint64_t nodes = 0;      // N of the frame
   bool one_node_units = false;  // pits: every primary unit is one node
 
-  bool lone_unit() const;       // some stratum has n_h = 1 < N_h: no variance
-  bool census() const;          // every stratum has n_h = N_h
+  bool lone_unit() const;  // some stratum has n_h = 1 < N_h: no variance
+  bool census() const;     // every stratum has n_h = N_h
 };
 
 // The variance, or 0 where pits of one area gave less than 1e-12 mean^2: that is rounding. Any other value, negative ones too, stays.

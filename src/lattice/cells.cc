@@ -1,5 +1,6 @@
 #include "lattice/cells.h"
 
+#include <algorithm>
 #include <boost/geometry.hpp>
 #include <boost/geometry/geometries/multi_polygon.hpp>
 #include <boost/geometry/geometries/point_xy.hpp>
@@ -14,22 +15,45 @@ using BoostPoint = bg::model::d2::point_xy<double>;
 using BoostPolygon = bg::model::polygon<BoostPoint, false, false>;
 using BoostMulti = bg::model::multi_polygon<BoostPolygon>;
 
-// Whole numbers of half spacings and half row distances: every corner is exact, so shared sides cancel exactly.
-BoostPolygon half_steps_cell(const Lattice& lattice, const Node& node) {
-  const double u = 2.0 * (node.column - 1) + (lattice.rows_shift() && node.row % 2 == 0 ? 1 : 0);
-  const double v = 2.0 * (node.row - 1);
-  BoostPolygon cell;
-  cell.outer() = {{u - 1, v - 1}, {u + 1, v - 1}, {u + 1, v + 1}, {u - 1, v + 1}};
-  return cell;
+// Nodes first..last of one row, side by side.
+struct CellRun {
+  Node first;
+  std::int32_t last_column = 0;
+};
+
+std::vector<CellRun> runs_of(std::vector<Node> nodes) {
+  std::sort(nodes.begin(), nodes.end());
+  std::vector<CellRun> runs;
+  for (const Node& node : nodes) {
+    const bool goes_on =
+        !runs.empty() && runs.back().first.row == node.row && runs.back().last_column + 1 == node.column;
+    if (goes_on) {
+      runs.back().last_column = node.column;
+    } else {
+      runs.push_back({node, node.column});
+    }
+  }
+  return runs;
 }
 
-BoostMulti united(const Lattice& lattice, std::span<const Node> nodes) {
+// Whole numbers of half spacings and half row distances: every corner is exact, so shared sides cancel exactly.
+BoostPolygon half_steps_rectangle(const Lattice& lattice, const CellRun& run) {
+  const double shift = lattice.rows_shift() && run.first.row % 2 == 0 ? 1 : 0;
+  const double from = 2.0 * (run.first.column - 1) + shift - 1;
+  const double to = 2.0 * (run.last_column - 1) + shift + 1;
+  const double v = 2.0 * (run.first.row - 1);
+  BoostPolygon rectangle;
+  rectangle.outer() = {{from, v - 1}, {to, v - 1}, {to, v + 1}, {from, v + 1}};
+  return rectangle;
+}
+
+BoostMulti united(const Lattice& lattice, std::span<const CellRun> runs) {
   BoostMulti out;
-  if (nodes.size() == 1) {
-    out.push_back(half_steps_cell(lattice, nodes.front()));
-  } else if (nodes.size() > 1) {
-    const std::size_t half = nodes.size() / 2;
-    bg::union_(united(lattice, nodes.first(half)), united(lattice, nodes.subspan(half)), out);
+  if (runs.size() == 1) {
+    out.push_back(half_steps_rectangle(lattice, runs.front()));
+  } else if (runs.size() > 1) {
+    const std::size_t half = runs.size() / 2;
+    bg::union_(united(lattice, runs.first(half)), united(lattice, runs.subspan(half)), out);
   }
   return out;
 }
@@ -46,7 +70,8 @@ MultiPolygon cells_outline(const Lattice& lattice, const std::vector<Node>& node
     return out;
   };
   MultiPolygon outline;
-  for (const BoostPolygon& polygon : united(lattice, nodes)) {
+  const std::vector<CellRun> runs = runs_of(nodes);
+  for (const BoostPolygon& polygon : united(lattice, runs)) {
     Polygon out{ring_of(polygon.outer()), {}};
     for (const auto& hole : polygon.inners())
       out.holes.push_back(ring_of(hole));

@@ -10,7 +10,8 @@
 
 namespace nearpit {
 
-// The union of the nodes' cells, on the ground. Distinct nodes. Cost: nodes times log nodes for compact sets.
+// The union of the nodes' cells, on the ground. Distinct nodes. Cost: nodes, and runs of
+// neighbours in a row times log runs for compact sets.
 MultiPolygon cells_outline(const Lattice& lattice, const std::vector<Node>& nodes);
 
 }  // namespace nearpit

@@ -2,6 +2,7 @@
 
 #include <algorithm>
 #include <optional>
+#include <unordered_map>
 
 #include "lattice/cells.h"
 #include "record/revision.h"
@@ -26,18 +27,29 @@ void fill_from_record(const PitRecord& record, const PositiveRule& rule, PitRow*
     row->finds[i] = record.counts[i];
 }
 
-std::string closed_reason(const Survey& survey, NodeId id) {
-  const bool access = survey.dig_list().not_dug(id, ReasonClass::kAccess);
-  for (const auto& [object, area] : survey.closed_areas()) {
-    if (area.open_again || (class_of(area.reason) == ReasonClass::kAccess) != access) continue;
-    const auto nodes = survey.nodes_in(area);
-    if (std::binary_search(nodes.begin(), nodes.end(), id)) return std::string(word(area.reason));
+// Why each node of a closed area counts as not dug: an access reason wins over a reason of the ground.
+class ClosedReasons {
+ public:
+  explicit ClosedReasons(const Survey& survey) {
+    for (const auto& [object, area] : survey.closed_areas()) {
+      if (area.open_again) continue;
+      for (const NodeId id : survey.nodes_in(area)) {
+        const auto [at, fresh] = reasons_.emplace(id, area.reason);
+        if (!fresh && class_of(at->second) == ReasonClass::kGround) at->second = area.reason;
+      }
+    }
   }
-  return "";
-}
+  std::string of(NodeId id) const {
+    const auto found = reasons_.find(id);
+    return found == reasons_.end() ? "" : std::string(word(found->second));
+  }
+
+ private:
+  std::unordered_map<NodeId, NotDugReason> reasons_;
+};
 
 // Nothing when the layer does not show the node: nobody dug it and nobody has to.
-std::optional<PitRow> pit_row(const SurveyModel& model, NodeId id) {
+std::optional<PitRow> pit_row(const SurveyModel& model, const ClosedReasons& closed, NodeId id) {
   const Survey& survey = model.survey();
   const SurveyGround& ground = survey.ground();
   const DigList& list = survey.dig_list();
@@ -57,7 +69,7 @@ std::optional<PitRow> pit_row(const SurveyModel& model, NodeId id) {
     row.outcome = "due";
   } else if (list.in_design(id)) {
     row.outcome = "not dug";
-    row.reason = closed_reason(survey, id);
+    row.reason = closed.of(id);
   } else {
     return std::nullopt;
   }
@@ -131,9 +143,10 @@ std::vector<ClosedAreaRow> closed_rows(const SurveyModel& model) {
 LayerRows layer_rows(const SurveyModel& model) {
   LayerRows rows;
   rows.finds = model.plan().finds;
+  const ClosedReasons closed(model.survey());
   for (NodeId id = 0; id < model.survey().ground().frame.size(); ++id) {
     if (!model.survey().dig_list().in_design(id) && !model.survey().pit(id)) continue;
-    if (auto row = pit_row(model, id)) rows.pits.push_back(std::move(*row));
+    if (auto row = pit_row(model, closed, id)) rows.pits.push_back(std::move(*row));
   }
   for (const auto& [label, entry] : model.survey().off_grid_pits()) {
     if (auto row = off_grid_row(model, label)) rows.pits.push_back(std::move(*row));
@@ -150,8 +163,9 @@ LayerChanges layer_changes(const SurveyModel& model, std::vector<NodeId> nodes, 
   LayerChanges changes;
   std::sort(nodes.begin(), nodes.end());
   nodes.erase(std::unique(nodes.begin(), nodes.end()), nodes.end());
+  const ClosedReasons closed(model.survey());
   for (const NodeId id : nodes) {
-    if (auto row = pit_row(model, id)) {
+    if (auto row = pit_row(model, closed, id)) {
       changes.put_pits.push_back(std::move(*row));
     } else {
       changes.remove_pits.push_back(model.label(id));

@@ -34,6 +34,10 @@ std::string unremembered(const Error& error) {
   return error.one_line() + "; the records are saved, but the next save will go on as a new writer";
 }
 
+FileProblem unreadable(const std::string& path, const Error& error) {
+  return {"content", path, error.one_line(), "keep the file as it is and go on with the last good copy"};
+}
+
 struct ChosenWriter {
   WriterRow row;
   bool is_new = false;
@@ -158,13 +162,28 @@ Result<Figures> Session::figures_of_day(const std::string& day) {
 
 CheckReport Session::check() {
   CheckReport report;
-  report.problems = check_file(file_);
-  for (FileProblem& problem : check_layers(file_, layer_rows(*model_)))
-    report.problems.push_back(std::move(problem));
+  const Status read = file_.read_as_one([&]() -> Status {
+    report.problems = check_file(file_);
+    NEARPIT_TRY(catch_up());
+    for (FileProblem& problem : check_layers(file_, layer_rows(*model_)))
+      report.problems.push_back(std::move(problem));
+    return ok_status();
+  });
+  if (!read) report.problems.push_back(unreadable(file_.path(), read.error()));
   report.whole = report.problems.empty();
   for (FileProblem& problem : blank_fields(*model_))
     report.problems.push_back(std::move(problem));
   report.complete = report.problems.empty();
+  return report;
+}
+
+Result<CheckReport> check_survey(const std::string& path, Environment& environment) {
+  auto session = Session::open(path, environment, true);
+  if (session) return session->check();
+  NEARPIT_ASSIGN(file, SurveyFile::open(path, true));
+  CheckReport report;
+  report.problems = check_file(file);
+  report.problems.push_back(unreadable(path, session.error()));
   return report;
 }
 

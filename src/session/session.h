@@ -43,6 +43,7 @@ class Session {
   // All records, or only revisions whose wall time lies not later than the day (2026-05-04, in the plan's zone).
   const Figures& figures();
   Result<Figures> figures_of_day(const std::string& day);
+  // Everything that check_survey says of this file.
   CheckReport check();
 
   const SurveyModel& model() const { return *model_; }
@@ -67,6 +68,9 @@ class Session {
   std::optional<Figures> figures_;
   std::int64_t figures_revision_ = -1;
 };
+
+// The check of a survey file, also of one whose plan or records can't be read. Errors: no such file; not a survey file; pages that can't be read.
+Result<CheckReport> check_survey(const std::string& path, Environment& environment);
 
 }  // namespace nearpit
 

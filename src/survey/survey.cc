@@ -1,6 +1,7 @@
 #include "survey/survey.h"
 
 #include <algorithm>
+#include <unordered_set>
 #include <utility>
 
 namespace nearpit {
@@ -57,8 +58,9 @@ std::vector<NodeId> Survey::nodes_in(const ClosedArea& area) const {
     ground_->frame.each_inside(area.polygon, [&](NodeId id) { nodes.push_back(id); });
     return nodes;
   }
+  const std::unordered_set<std::int32_t> rows(area.rows.begin(), area.rows.end());
   for (const Run& run : ground_->frame.runs()) {
-    if (std::find(area.rows.begin(), area.rows.end(), run.row) == area.rows.end()) continue;
+    if (!rows.contains(run.row)) continue;
     for (NodeId id = run.start; id <= run.start + (run.last - run.first); ++id)
       nodes.push_back(id);
   }
