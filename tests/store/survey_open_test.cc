@@ -49,7 +49,19 @@ TEST_F(SurveyOpen, SetsWhatMakesASaveSafe) {
   EXPECT_EQ(ask(*file, "PRAGMA busy_timeout"), "5000");
   const std::string mapped = ask(*file, "PRAGMA mmap_size");
   EXPECT_TRUE(mapped == "0" || mapped == "nothing") << mapped;
-  EXPECT_EQ(ask(*file, "SELECT load_extension('x')"), "nothing");
+  const std::pair<int, int> settings[] = {
+      {SQLITE_DBCONFIG_ENABLE_LOAD_EXTENSION, 0},
+      {SQLITE_DBCONFIG_DEFENSIVE, 1},
+      {SQLITE_DBCONFIG_DQS_DML, 0},
+      {SQLITE_DBCONFIG_DQS_DDL, 0},
+      {SQLITE_DBCONFIG_ENABLE_VIEW, 0},
+      {SQLITE_DBCONFIG_ENABLE_TRIGGER, 0},
+  };
+  for (const auto& [setting, should] : settings) {
+    int is = -1;
+    EXPECT_EQ(sqlite3_db_config(file->handle().db.raw(), setting, -1, &is), SQLITE_OK);
+    EXPECT_EQ(is, should) << setting;
+  }
   EXPECT_EQ(ask(*file, "SELECT \"no such column\""), "nothing");
   EXPECT_FALSE(file->handle().db.run("PRAGMA writable_schema = ON; UPDATE sqlite_schema SET sql = ''").ok());
 }
