@@ -1,9 +1,8 @@
 # Sourced by demo_projects/run.sh and tests/cli/demo_approved_test.sh: plays one demo survey through the real program.
 # shellcheck shell=bash
 
-# play_demo NEARPIT DEMO OUT: makes OUT/<name>.gpkg from DEMO/plan.json, logs DEMO/day-1.csv, day-2.csv, … (with
-# day-k-layers.csv where there is one), takes day-k-act.json after its day, and writes next.txt, tally.txt and tally.json
-# into OUT. Line 1 of clock.txt is the time at which the survey is made, line k+1 the evening of day k. Stops at the first
+# play_demo NEARPIT DEMO OUT: makes OUT/<name>.gpkg from DEMO/plan.json, logs DEMO/day-1.csv, day-2.csv, …, takes
+# day-k-act.json after its day, and writes next.txt, tally.txt and tally.json into OUT. Line 1 of clock.txt is the time at which the survey is made, line k+1 the evening of day k. Stops at the first
 # command that fails.
 play_demo() {
   local nearpit=$1 demo=$2 out=$3 name file day=1
@@ -19,9 +18,7 @@ play_demo() {
   "$nearpit" new "$demo/plan.json" "$file" || return
   while [ -e "$demo/day-$day.csv" ]; do
     NEARPIT_CLOCK=$(demo_clock "$demo" $((day + 1))) || return
-    local layers=()
-    [ ! -e "$demo/day-$day-layers.csv" ] || layers=(--layers "$demo/day-$day-layers.csv")
-    "$nearpit" log "$file" "$demo/day-$day.csv" ${layers[@]+"${layers[@]}"} || return
+    "$nearpit" log "$file" "$demo/day-$day.csv" || return
     if [ -e "$demo/day-$day-act.json" ]; then
       "$nearpit" act "$file" "$demo/day-$day-act.json" || return
     fi

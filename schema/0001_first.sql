@@ -226,7 +226,7 @@ CREATE TABLE column_notes (
 INSERT INTO column_notes (layer_name, column_name, meaning) VALUES
   ('pits', 'geom', 'where the pit was dug, or its grid point while it is not'),
   ('pits', 'label', 'row (transect) and column of the pit on the grid, or a name of its own off the grid'),
-  ('pits', 'outcome', 'positive, negative, not dug, due (to dig), halted (stop-work near by) or withdrawn'),
+  ('pits', 'outcome', 'positive, negative, not dug, due (to dig) or halted (stop-work near by)'),
   ('pits', 'area', 'the area (stratum) of the plan that the pit stands in; empty off the grid'),
   ('pits', 'first_sample', '1: the pit belongs to the drawn first sample'),
   ('pits', 'ring', 'steps from the first sample through positive pits; empty when the design does not reach the pit'),

@@ -55,10 +55,11 @@ std::string clusters_text(const Figures& figures, const SurveyModel& model) {
   return text;
 }
 
-std::string missed_text(const Figures& figures) {
+std::string missed_text(const Figures& figures, const SurveyModel& model) {
   if (!figures.missed_cluster_pits) return "";
   return "\nA cluster of up to " + counted(*figures.missed_cluster_pits, "pit", "pits") +
-         " could still have been missed by the grid pits.\n";
+         " could have been missed by the grid pits (chance 1 in " +
+         format_trimmed(1 / (1 - model.plan().confidence), 1) + " or more), even if each of its pits would prove positive.\n";
 }
 
 std::string estimator_words(Estimator estimator) {
@@ -140,7 +141,7 @@ std::string estimates_text(const Figures& figures, const SurveyModel& model) {
 
 std::string tally_text(const Figures& figures, const SurveyModel& model, const std::string& day) {
   return model.plan().survey + (day.empty() ? ": all records\n" : ": records up to " + day + "\n") + "\n" +
-         progress_text(figures.progress) + clusters_text(figures, model) + missed_text(figures) +
+         progress_text(figures.progress) + clusters_text(figures, model) + missed_text(figures, model) +
          estimates_text(figures, model);
 }
 

@@ -90,7 +90,7 @@ std::vector<std::string> first_sample_warnings(const Areas& areas, const Primary
     const std::string of_all = std::to_string(drawn) + " of " + std::to_string(all) + " " + unit_word(units.kind, true);
     if (drawn == 1 && all > 1) {
       warnings.push_back(where + "only 1 of " + std::to_string(all) + " " + unit_word(units.kind, true) +
-                         " drawn: no standard error or likely range can be given; draw 2 or more");
+                         " drawn: no likely range can be given; draw 2 or more");
     } else if (drawn < all && drawn < (units.kind == DrawKind::kTransects ? 5u : 4u)) {
       warnings.push_back(where + "only " + of_all + " drawn: likely ranges will be wide and rough; " +
                          (units.kind == DrawKind::kTransects ? "5" : "4") + " or more are advised");

@@ -27,7 +27,7 @@ Result<FirstSample> draw_first_sample(const Areas& areas, const PrimaryUnits& un
 Result<FirstSample> listed_first_sample(const Areas& areas, const PrimaryUnits& units,
                                         const std::vector<NodeId>& listed);
 
-// Warnings for the person who plans: one line each (a lone unit in an area gives no variance, one systematic start, fewer than 4 units).
+// Warnings for the person who plans: one line each (a lone unit in an area gives no variance, one systematic start, fewer than 4 units, 5 for transects).
 std::vector<std::string> first_sample_warnings(const Areas& areas, const PrimaryUnits& units,
                                                const FirstSample& sample);
 

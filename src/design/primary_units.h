@@ -21,8 +21,8 @@ namespace nearpit {
 enum class DrawKind { kPits, kTransects, kSystematic };
 std::string_view draw_kind_name(DrawKind kind);
 
-using UnitId = std::
-    uint32_t;  // 0 .. N_h - 1 within its area, in the order of its first node (systematic: by q start, then p start)
+// 0 .. N_h - 1 within its area, in the order of its first node (systematic: by q start, then p start)
+using UnitId = std::uint32_t;
 
 struct PrimaryUnits {
   DrawKind kind = DrawKind::kPits;

@@ -96,9 +96,9 @@ std::vector<std::string> open_reasons(const OpenWork& everywhere, const OpenWork
   }
   std::vector<std::string> reasons = reasons_of(first_sample);
   if (first_sample.hides_variance()) {
-    reasons.push_back("no likely range until the first sample is dug and settled");
+    reasons.push_back("no likely range until the grid pits are dug and settled");
   } else if (everywhere.any() && !first_sample.any()) {
-    reasons.push_back("what is open lies outside the first sample and does not change this row");
+    reasons.push_back("what is open lies outside the grid pits and does not change this row");
   }
   return reasons;
 }

@@ -15,8 +15,8 @@ namespace nearpit {
 // Every node of the first sample, and every other pit dug, due, halted or not dug; off the grid too.
 struct PitRow {
   std::string label;  // unique
-  std::string
-      outcome;  // positive, negative, not dug, due, halted, withdrawn (a pit of the first sample whose record was taken back is due again)
+  // positive, negative, not dug, due, halted (a design pit whose record was taken back is due again)
+  std::string outcome;
   Point place;  // as dug, else the node
   std::string area;  // "" off the grid
   bool first_sample = false;

@@ -22,8 +22,8 @@ struct Progress {
   std::size_t withdrawn = 0;
   std::size_t conflicts = 0;
   std::size_t access_refused = 0;  // design pits not dug for an access reason
-  std::size_t first_sample_open =
-      0;  // first-sample pits due, halted or in a conflict that could change what is positive
+  // first-sample pits due, halted or in a conflict that could change what is positive
+  std::size_t first_sample_open = 0;
   std::size_t outcome_conflicts = 0;  // conflicts on design pits that could change what is positive
   bool complete = false;              // the first sample recorded; nothing due, halted, in conflict or refused
   bool truncated = false;             // the ring limit kept a pit off

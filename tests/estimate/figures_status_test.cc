@@ -102,7 +102,7 @@ TEST(FiguresStatus, DuePitsLeaveTheFirstSamplesRowAlone) {
   EXPECT_EQ(first.status, FigureStatus::kProvisional);
   EXPECT_TRUE(first.variance_of_mean && first.range && first.ground.range);
   EXPECT_THAT(first.why,
-              ElementsAre("what is open lies outside the first sample and does not change this row", kLattice));
+              ElementsAre("what is open lies outside the grid pits and does not change this row", kLattice));
   EXPECT_TRUE(figures.missed_cluster_pits);
 }
 
@@ -113,7 +113,7 @@ TEST(FiguresStatus, UnfinishedFirstSampleTakesEveryRange) {
     EXPECT_TRUE(has_no_spread(target(figures, estimator)));
     EXPECT_THAT(target(figures, estimator).why, Contains("2 pits are still to dig: figures count them as empty"));
   }
-  EXPECT_THAT(target(figures, kFirst).why, Contains("no likely range until the first sample is dug and settled"));
+  EXPECT_THAT(target(figures, kFirst).why, Contains("no likely range until the grid pits are dug and settled"));
   EXPECT_FALSE(figures.missed_cluster_pits);
 }
 
@@ -318,6 +318,13 @@ TEST(FiguresStatus, JudgementPitsOnlyRaiseTheFloor) {
   EXPECT_DOUBLE_EQ(row.range->upper, 6.1);
   EXPECT_THAT(row.why, Contains("more was dug up than this figure says: no likely range lies below what was found"));
   EXPECT_EQ(row_of(figures, "sherd", kHH).mean_per_pit, 0);
+}
+
+TEST(FiguresStatus, PitsFoundEmptyCapTheShareOfPositives) {
+  const Estimate row = row_of(figures_of("o3 . . o. . o2 . ."), "positive pits", kFirst);
+  ASSERT_TRUE(row.range);
+  EXPECT_DOUBLE_EQ(row.range->lower, 2.0 / 8);
+  EXPECT_DOUBLE_EQ(row.range->upper, 1 - 6.0 / 8);
 }
 
 TEST(FiguresStatus, MissedClusterIsForPitsOnly) {
