@@ -59,7 +59,8 @@ std::string missed_text(const Figures& figures, const SurveyModel& model) {
   if (!figures.missed_cluster_pits) return "";
   return "\nA cluster of up to " + counted(*figures.missed_cluster_pits, "pit", "pits") +
          " could have been missed by the grid pits (chance 1 in " +
-         format_trimmed(1 / (1 - model.plan().confidence), 1) + " or more), even if each of its pits would prove positive.\n";
+         format_trimmed(1 / (1 - model.plan().confidence), 1) +
+         " or more), even if each of its pits would prove positive.\n";
 }
 
 std::string estimator_words(Estimator estimator) {

@@ -17,8 +17,24 @@
 namespace nearpit {
 
 enum class PitColumn {
-  kPit, kStatus, kReason, kCrew, kStartedAt, kDugAt, kDepth, kStop, kChosenBy, kX, kY, kMoved, kMesh, kBackfilled, kBag,
-  kNote, kBy, kWhy,
+  kPit,
+  kStatus,
+  kReason,
+  kCrew,
+  kStartedAt,
+  kDugAt,
+  kDepth,
+  kStop,
+  kChosenBy,
+  kX,
+  kY,
+  kMoved,
+  kMesh,
+  kBackfilled,
+  kBag,
+  kNote,
+  kBy,
+  kWhy,
 };
 constexpr std::size_t kPitColumns = 18;
 std::string_view word(PitColumn column);

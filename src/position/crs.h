@@ -11,9 +11,9 @@
 namespace nearpit {
 
 struct CrsFacts {
-  int epsg = 0;             // 0 for "local"
-  std::string name;         // "WGS 84 / UTM zone 17N"; "local grid"
-  std::string wkt;          // WKT 1 in the form that GeoPackage 1.3 wants (WKT1:GDAL); "undefined" for local
+  int epsg = 0;      // 0 for "local"
+  std::string name;  // "WGS 84 / UTM zone 17N"; "local grid"
+  std::string wkt;   // WKT 1 in the form that GeoPackage 1.3 wants (WKT1:GDAL); "undefined" for local
 };
 
 // "EPSG:<code>" or "local". Errors: unknown code; not projected; not in metres; axes that don't run east and north.

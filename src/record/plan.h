@@ -33,44 +33,44 @@ enum class PitShape { kSquare, kRound };
 
 struct InitialSample {
   bool listed = false;
-  DrawKind draw = DrawKind::kPits;              // listed: what the list stands for
-  std::int32_t every = 1;                       // systematic
-  std::map<std::string, std::uint32_t> count;   // by area name; empty when listed
-  std::uint64_t seed = 0;                       // not when listed
-  std::vector<std::string> pits;                // listed: labels as written
-  std::string how;                              // listed: how it was drawn, in words
+  DrawKind draw = DrawKind::kPits;             // listed: what the list stands for
+  std::int32_t every = 1;                      // systematic
+  std::map<std::string, std::uint32_t> count;  // by area name; empty when listed
+  std::uint64_t seed = 0;                      // not when listed
+  std::vector<std::string> pits;               // listed: labels as written
+  std::string how;                             // listed: how it was drawn, in words
 };
 
 struct Plan {
-  std::string survey;                 // 1..200 code points
-  std::string crs;                    // "EPSG:<code>" or "local"
-  MultiPolygon boundary;              // empty while boundary_file is not read yet
-  std::string boundary_file;          // "boundary": {"file": ...}; empty otherwise
+  std::string survey;         // 1..200 code points
+  std::string crs;            // "EPSG:<code>" or "local"
+  MultiPolygon boundary;      // empty while boundary_file is not read yet
+  std::string boundary_file;  // "boundary": {"file": ...}; empty otherwise
   LatticeKind lattice = LatticeKind::kSquare;
-  double spacing_m = 0;               // 0.1 .. 1000
-  double bearing_deg = 90;            // 0 <= b < 360
+  double spacing_m = 0;     // 0.1 .. 1000
+  double bearing_deg = 90;  // 0 <= b < 360
   std::optional<Point> origin;
-  bool random_origin = false;         // from initial.seed, inside one cell
+  bool random_origin = false;  // from initial.seed, inside one cell
   NeighbourRule neighbours = NeighbourRule::kEight;
   PitShape pit_shape = PitShape::kSquare;
-  double pit_size_m = 0;              // side or diameter, 0.05 .. 10 and at most the spacing
-  std::vector<std::string> finds;     // 1..100, distinct ignoring case
+  double pit_size_m = 0;           // side or diameter, 0.05 .. 10 and at most the spacing
+  std::vector<std::string> finds;  // 1..100, distinct ignoring case
   PositiveRule positive;
-  std::vector<PlanArea> areas;        // empty: one area named "all"
+  std::vector<PlanArea> areas;  // empty: one area named "all"
   InitialSample initial;
-  std::optional<std::int32_t> ring_limit;   // >= 1 .. 100000
+  std::optional<std::int32_t> ring_limit;  // >= 1 .. 100000
   Confinement confinement;
-  bool nearest_order = false;         // "order": "nearest"; default transect
+  bool nearest_order = false;  // "order": "nearest"; default transect
   LabelKind labels = LabelKind::kTransect;
   std::optional<Point> label_datum;
-  double confidence = 0.95;           // 0.5 .. 0.999
-  double max_move_m = 2;              // 0 .. 100
-  double depth_limit_m = 1.2;         // 0.1 .. 10
-  double stop_distance_m = 30;        // 1 .. 10000
-  double declination_deg = 0;         // -180 .. 180
-  std::string time_zone = "UTC";      // checked against the system's zones
+  double confidence = 0.95;       // 0.5 .. 0.999
+  double max_move_m = 2;          // 0 .. 100
+  double depth_limit_m = 1.2;     // 0.1 .. 10
+  double stop_distance_m = 30;    // 1 .. 10000
+  double declination_deg = 0;     // -180 .. 180
+  std::string time_zone = "UTC";  // checked against the system's zones
   std::vector<std::string> crews;
-  std::vector<std::string> require;   // record.require: fields a finished record must have
+  std::vector<std::string> require;  // record.require: fields a finished record must have
 
   double pit_area_m2() const;
 };

@@ -17,7 +17,7 @@ struct PitRow {
   std::string label;  // unique
   // positive, negative, not dug, due, halted (a design pit whose record was taken back is due again)
   std::string outcome;
-  Point place;  // as dug, else the node
+  Point place;       // as dug, else the node
   std::string area;  // "" off the grid
   bool first_sample = false;
   std::optional<std::int64_t> ring;  // nothing when the design does not reach it

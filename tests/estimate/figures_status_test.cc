@@ -101,8 +101,7 @@ TEST(FiguresStatus, DuePitsLeaveTheFirstSamplesRowAlone) {
   const Estimate& first = target(figures, kFirst);
   EXPECT_EQ(first.status, FigureStatus::kProvisional);
   EXPECT_TRUE(first.variance_of_mean && first.range && first.ground.range);
-  EXPECT_THAT(first.why,
-              ElementsAre("what is open lies outside the grid pits and does not change this row", kLattice));
+  EXPECT_THAT(first.why, ElementsAre("what is open lies outside the grid pits and does not change this row", kLattice));
   EXPECT_TRUE(figures.missed_cluster_pits);
 }
 
