@@ -34,6 +34,12 @@ int print_saved(const std::string& text) {
 
 int print_json(const Json& json) { return print(json.dump(2) + "\n"); }
 
+std::string padded(const std::string& text, std::size_t width, bool right) {
+  const std::size_t length = utf8_length(text);
+  const std::string spaces(width > length ? width - length : 0, ' ');
+  return right ? spaces + text : text + spaces;
+}
+
 void note(const std::string& text) { std::fprintf(stderr, "note: %s\n", text.c_str()); }
 
 }  // namespace nearpit::cli

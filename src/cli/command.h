@@ -29,6 +29,8 @@ int print(const std::string& text);
 // The same where the work is saved already: a failure says so.
 int print_saved(const std::string& text);
 int print_json(const Json& json);
+// Filled up with spaces to `width` code points, on the left when `right`.
+std::string padded(const std::string& text, std::size_t width, bool right);
 // A line that begins "note: ", on standard error.
 void note(const std::string& text);
 

@@ -1,5 +1,6 @@
 #include "cli/next_command.h"
 
+#include <algorithm>
 #include <memory>
 #include <optional>
 
@@ -66,13 +67,6 @@ std::string reason_text(const DigStop& stop, const SurveyModel& model) {
   return "next to " + list_in_words(model.labels_of(stop.of)) + " (" + steps + ")";
 }
 
-std::string padded(std::string text, std::size_t width, bool right) {
-  const std::size_t length = utf8_length(text);
-  if (length >= width) return text;
-  const std::string spaces(width - length, ' ');
-  return right ? spaces + text : text + spaces;
-}
-
 std::string as_text(const DigOrder& order, const SurveyModel& model) {
   std::string text = model.plan().survey + ": ";
   if (order.due.empty()) {
@@ -99,11 +93,19 @@ std::string as_text(const DigOrder& order, const SurveyModel& model) {
   return text;
 }
 
+// A plan that lists crews has no others.
+Status check_crew(const std::string& crew, const std::vector<std::string>& crews) {
+  if (crew.empty() || crews.empty() || std::find(crews.begin(), crews.end(), crew) != crews.end()) return ok_status();
+  return Error(ErrorKind::kBadInput,
+               "--crew: " + in_quotes(crew) + " is no crew of the plan; legal: " + join(crews, ", "));
+}
+
 int run_next(const NextOptions& options) {
   auto environment = real_environment();
   if (!environment) return fail(environment.error());
   const auto session = Session::open(options.file, *environment, true);
   if (!session) return fail(session.error());
+  if (const Status known = check_crew(options.crew, session->model().plan().crews); !known) return fail(known.error());
   const auto from = start_of(options, *session);
   if (!from) return fail(from.error());
   const DigOrder order = session->dig_order(options.crew, *from);

@@ -5,6 +5,7 @@
 
 #include "base/numbers.h"
 #include "base/text.h"
+#include "cli/command.h"
 
 namespace nearpit::cli {
 namespace {
@@ -80,14 +81,9 @@ std::string range_text(const std::optional<LikelyRange>& range, double factor) {
   return " (likely " + figure(range->lower * factor) + " to " + figure(range->upper * factor) + ")";
 }
 
-std::string padded(std::string text, std::size_t width) {
-  text.append(width > text.size() ? width - text.size() : 0, ' ');
-  return text;
-}
-
 std::string row_text(const Estimate& estimate, const SurveyModel& model) {
   const SurveyGround& ground = model.survey().ground();
-  std::string text = "    " + padded(estimator_words(estimate.estimator), 17);
+  std::string text = "    " + padded(estimator_words(estimate.estimator), 17, false);
   if (estimate.per_m2) {
     const double area = ground.frame.size() * ground.frame.lattice().cell_area_m2();
     text += figure(estimate.mean_per_pit) + " a pit" + range_text(estimate.range, 1) + "; " + figure(*estimate.per_m2) +

@@ -7,21 +7,6 @@
 #include "base/text.h"
 
 namespace nearpit {
-namespace {
-
-std::string unit_word(DrawKind kind, bool plural) {
-  switch (kind) {
-    case DrawKind::kPits:
-      return plural ? "pits" : "pit";
-    case DrawKind::kTransects:
-      return plural ? "transects" : "transect";
-    case DrawKind::kSystematic:
-      break;
-  }
-  return plural ? "systematic starts" : "systematic start";
-}
-
-}  // namespace
 
 FirstSample FirstSample::from_units(const Areas& areas, const PrimaryUnits& units,
                                     std::vector<std::vector<UnitId>> drawn) {
@@ -48,7 +33,7 @@ Result<FirstSample> draw_first_sample(const Areas& areas, const PrimaryUnits& un
   for (std::size_t area = 0; area < areas.list.size(); ++area) {
     if (count[area] >= 1 && count[area] <= units.count[area]) continue;
     problems.push_back("initial.count." + areas.list[area].name + ": " + std::to_string(count[area]) + " of " +
-                       std::to_string(units.count[area]) + " " + unit_word(units.kind, true) +
+                       std::to_string(units.count[area]) + " " + std::string(unit_word(units.kind, true)) +
                        " can't be drawn; legal: 1 to " + std::to_string(units.count[area]));
   }
   if (!problems.empty()) return Error(ErrorKind::kBadInput, std::move(problems));
@@ -87,9 +72,10 @@ std::vector<std::string> first_sample_warnings(const Areas& areas, const Primary
     const std::size_t drawn = sample.drawn[area].size();
     const std::size_t all = units.count[area];
     const std::string where = areas.list.size() > 1 ? "area " + in_quotes(areas.list[area].name) + ": " : "";
-    const std::string of_all = std::to_string(drawn) + " of " + std::to_string(all) + " " + unit_word(units.kind, true);
+    const std::string of_all =
+        std::to_string(drawn) + " of " + std::to_string(all) + " " + std::string(unit_word(units.kind, true));
     if (drawn == 1 && all > 1) {
-      warnings.push_back(where + "only 1 of " + std::to_string(all) + " " + unit_word(units.kind, true) +
+      warnings.push_back(where + "only 1 of " + std::to_string(all) + " " + std::string(unit_word(units.kind, true)) +
                          " drawn: no likely range can be given; draw 2 or more");
     } else if (drawn < all && drawn < (units.kind == DrawKind::kTransects ? 5u : 4u)) {
       warnings.push_back(where + "only " + of_all + " drawn: likely ranges will be wide and rough; " +

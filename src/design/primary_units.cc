@@ -65,6 +65,18 @@ std::string_view draw_kind_name(DrawKind kind) {
   return "";
 }
 
+std::string_view unit_word(DrawKind kind, bool several) {
+  switch (kind) {
+    case DrawKind::kPits:
+      return several ? "pits" : "pit";
+    case DrawKind::kTransects:
+      return several ? "transects" : "transect";
+    case DrawKind::kSystematic:
+      break;
+  }
+  return several ? "systematic starts" : "systematic start";
+}
+
 PrimaryUnits PrimaryUnits::of(const Frame& frame, const Areas& areas, DrawKind kind, std::int32_t every) {
   PrimaryUnits units;
   units.kind = kind;

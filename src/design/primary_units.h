@@ -20,6 +20,8 @@ namespace nearpit {
 
 enum class DrawKind { kPits, kTransects, kSystematic };
 std::string_view draw_kind_name(DrawKind kind);
+// What people call one primary unit, or several.
+std::string_view unit_word(DrawKind kind, bool several);
 
 // 0 .. N_h - 1 within its area, in the order of its first node (systematic: by q start, then p start)
 using UnitId = std::uint32_t;

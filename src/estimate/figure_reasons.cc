@@ -42,18 +42,6 @@ std::vector<std::string> reasons_of(const OpenWork& open) {
   return reasons;
 }
 
-const char* unit_word(DrawKind kind) {
-  switch (kind) {
-    case DrawKind::kPits:
-      return "pit";
-    case DrawKind::kTransects:
-      return "transect";
-    case DrawKind::kSystematic:
-      break;
-  }
-  return "systematic start";
-}
-
 }  // namespace
 
 OpenWork open_work(const Progress& progress) {
@@ -109,7 +97,8 @@ std::string lone_unit_reason(const SurveyGround& ground) {
     const bool lone = ground.sample.drawn[area].size() == 1 && ground.units.count[area] > 1;
     if (lone) names.push_back(ground.areas.list[area].name);
   }
-  const std::string rest = std::string("one drawn ") + unit_word(ground.units.kind) + " only: no spread can be given";
+  const std::string rest =
+      "one drawn " + std::string(unit_word(ground.units.kind, false)) + " only: no spread can be given";
   if (ground.areas.list.size() == 1) return rest;
   return (names.size() == 1 ? "area " : "areas ") + list_in_words(names) + (names.size() == 1 ? " has " : " have ") +
          rest;

@@ -1,8 +1,8 @@
 #include "exchange/pits_columns.h"
 
 #include <algorithm>
-#include <numeric>
 
+#include "base/nearest_word.h"
 #include "base/text.h"
 
 namespace nearpit {
@@ -22,40 +22,6 @@ std::string all_columns() {
     all += ", ";
   }
   return all + "find:<name>, weight:<name>";
-}
-
-// Characters to add, drop or change (Levenshtein 1966).
-std::size_t changes_between(std::string_view from, std::string_view to) {
-  std::vector<std::size_t> row(to.size() + 1);
-  std::iota(row.begin(), row.end(), std::size_t{0});
-  for (std::size_t i = 0; i < from.size(); ++i) {
-    std::size_t above_left = row[0];
-    row[0] = i + 1;
-    for (std::size_t j = 0; j < to.size(); ++j) {
-      const std::size_t changed = above_left + (from[i] == to[j] ? 0 : 1);
-      above_left = row[j + 1];
-      row[j + 1] = std::min({changed, row[j] + 1, row[j + 1] + 1});
-    }
-  }
-  return row.back();
-}
-
-// The column that may have been meant; nothing when none is near.
-std::optional<std::string_view> nearest_column(std::string_view written) {
-  constexpr std::size_t kLongest = 60;
-  if (written.size() > kLongest) return std::nullopt;
-  const std::string folded = fold_case(written);
-  std::size_t least = std::max<std::size_t>(2, folded.size() / 3) + 1;
-  std::optional<std::string_view> nearest;
-  for (const std::string_view name : kNames) {
-    const bool begun = folded.size() >= 3 && (name.starts_with(folded) || folded.starts_with(name));
-    const std::size_t changes = begun ? 1 : changes_between(folded, name);
-    if (changes < least && changes < name.size()) {
-      least = changes;
-      nearest = name;
-    }
-  }
-  return nearest;
 }
 
 class HeaderReader {
@@ -99,8 +65,8 @@ class HeaderReader {
   }
 
   void unknown(std::string_view name) {
-    const auto nearest = nearest_column(name);
-    const std::string hint = nearest ? "did you mean " + in_quotes(*nearest) + "? " : "";
+    const std::string_view meant = nearest_word(name, kNames);
+    const std::string hint = meant.empty() ? "" : "did you mean " + in_quotes(meant) + "? ";
     add("", in_quotes(name) + " is no column; " + hint + "legal: " + all_columns());
   }
   void twice(const std::string& name, std::size_t first, std::size_t second) {

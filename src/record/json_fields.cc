@@ -2,47 +2,15 @@
 
 #include <algorithm>
 #include <cmath>
-#include <numeric>
 #include <set>
 
+#include "base/nearest_word.h"
 #include "base/numbers.h"
 #include "base/text.h"
 #include "record/geometry_json.h"
 
 namespace nearpit {
 namespace {
-
-// Steps of adding, dropping or changing one character (Levenshtein 1966).
-std::size_t edit_distance(std::string_view from, std::string_view to) {
-  std::vector<std::size_t> row(to.size() + 1);
-  std::iota(row.begin(), row.end(), std::size_t{0});
-  for (std::size_t i = 0; i < from.size(); ++i) {
-    std::size_t diagonal = row[0];
-    row[0] = i + 1;
-    for (std::size_t j = 0; j < to.size(); ++j) {
-      const std::size_t changed = diagonal + (from[i] == to[j] ? 0 : 1);
-      diagonal = row[j + 1];
-      row[j + 1] = std::min({changed, row[j] + 1, row[j + 1] + 1});
-    }
-  }
-  return row.back();
-}
-
-// The word that was meant; empty when none is near.
-std::string_view nearest_word(const std::string& word, std::span<const std::string_view> words) {
-  if (word.size() > 60 || words.empty()) return "";
-  std::size_t least = std::max<std::size_t>(2, word.size() / 3) + 1;
-  std::string_view best;
-  for (const std::string_view candidate : words) {
-    const bool longer = candidate.starts_with(word) && word.size() >= 3;
-    const std::size_t distance = longer ? 1 : edit_distance(word, candidate);
-    if (distance < least && distance < candidate.size()) {
-      least = distance;
-      best = candidate;
-    }
-  }
-  return best;
-}
 
 std::string characters(std::size_t most) { return "1 to " + std::to_string(most) + " characters"; }
 std::string name_legal(std::size_t most) {
