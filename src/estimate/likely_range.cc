@@ -54,7 +54,7 @@ std::optional<LikelyRange> plain_t_range(const RangeInput& input, std::string* w
   const double most = input.most_per_node.value_or(std::numeric_limits<double>::infinity());
   const double reach = t_factor(input.level, *input.nu) * std::sqrt(variance);
   return LikelyRange{.level = input.level,
-                     .lower = std::max(input.mean - reach, input.found_per_node),
+                     .lower = std::max(std::min(input.mean - reach, most), input.found_per_node),
                      .upper = std::max(std::min(input.mean + reach, most), input.found_per_node),
                      .method = "plain t"};
 }

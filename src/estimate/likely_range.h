@@ -32,13 +32,14 @@ struct RangeInput {
   std::optional<double> variance;
   std::optional<double> nu;
   double level = 0.95;
-  double found_per_node = 0;  // what was found over all dug nodes, per node of the frame: no range lies below it
-  std::optional<double>
-      most_per_node;    // what it can be at the most: for 0/1, 1 less the share of nodes dug and found empty
+  // Found over all dug nodes, per node of the frame: no range lies below it.
+  double found_per_node = 0;
+  // For 0/1: 1 less the share of nodes dug and found empty, at least found_per_node: no range lies above it.
+  std::optional<double> most_per_node = {};
   bool census = false;  // every unit drawn
 };
-// mean +- t sqrt(v), never below what was found nor above what is possible. Nothing, with the reason in `why`, when the variance is missing or negative, the estimate is 0, or every
-// drawn unit carries the same value.
+// mean +- t sqrt(v), never below what was found nor above what is possible. Nothing, with the reason in `why`, when the variance is missing
+// or negative, the estimate is 0, or every drawn unit carries the same value.
 std::optional<LikelyRange> plain_t_range(const RangeInput& input, std::string* why);
 
 }  // namespace nearpit

@@ -15,10 +15,12 @@ struct StratumPart {
 };
 
 struct Moments {
-  double mean = 0;  // per node of the frame
-  std::optional<double>
-      variance;  // of the mean; design-unbiased, may be negative for Horvitz-Thompson; nothing: not estimable
-  std::vector<StratumPart> parts;  // Hansen-Hurwitz only, by stratum; empty when the variance is not estimable
+  // Per node of the frame.
+  double mean = 0;
+  // Of the mean; design-unbiased, may be negative for Horvitz-Thompson; nothing: not estimable.
+  std::optional<double> variance;
+  // Hansen-Hurwitz only, by stratum; empty when the variance is not estimable.
+  std::vector<StratumPart> parts;
 };
 
 }  // namespace nearpit

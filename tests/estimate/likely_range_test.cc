@@ -76,6 +76,27 @@ TEST(PlainTRange, NeverBelowWhatWasFound) {
   EXPECT_EQ(above->upper, 9);
 }
 
+TEST(PlainTRange, NeverAboveWhatIsPossible) {
+  std::string why;
+  const auto range = plain_t_range({.mean = 0.5, .variance = 0.04, .nu = 3, .most_per_node = 0.8}, &why);
+  ASSERT_TRUE(range);
+  EXPECT_NEAR(range->lower, 0, 1e-12);
+  EXPECT_EQ(range->upper, 0.8);
+  const auto below =
+      plain_t_range({.mean = 0.5, .variance = 1e-6, .nu = 3, .found_per_node = 0.1, .most_per_node = 0.3}, &why);
+  ASSERT_TRUE(below);
+  EXPECT_EQ(below->lower, 0.3);
+  EXPECT_EQ(below->upper, 0.3);
+}
+
+TEST(SpreadIsUnjudged, OnlyWhereUnitsAreLeftOut) {
+  EXPECT_TRUE(spread_is_unjudged(2, 4e-18, false));
+  EXPECT_TRUE(spread_is_unjudged(0, 0, false));
+  EXPECT_FALSE(spread_is_unjudged(2, 4.1e-18, false));
+  EXPECT_FALSE(spread_is_unjudged(2, 0, true));
+  EXPECT_FALSE(spread_is_unjudged(2, -1e-19, false));
+}
+
 TEST(PlainTRange, SaysWhyThereIsNone) {
   std::string why;
   EXPECT_FALSE(plain_t_range({.mean = 1, .variance = {}, .nu = 3}, &why));
