@@ -87,6 +87,24 @@ TEST_F(FileCheck, FindsAChangedRevisionByItsHash) {
   EXPECT_THAT(file_text(), HasSubstr("chain | revision 3 of writer"));
 }
 
+// The plan and the first sample stand under every chain.
+TEST_F(FileCheck, FindsAnotherPlanOrFirstSample) {
+  const std::string whole = samples::bytes_of(path_);
+  for (const auto& [table, change] :
+       {std::pair<std::string, std::string>{"survey", "plan = replace(plan, 'Invented', 'Other')"},
+        {"survey", "survey_id = replace(survey_id, '018f', '018e')"},
+        {"drawn", "unit = 5 WHERE unit = 4"}}) {
+    const std::string trigger = "nearpit_" + table + "_no_update";
+    const std::string sql = ForeignProgram(path_).ask("SELECT sql FROM sqlite_schema WHERE name = '" + trigger + "'");
+    meddle("DROP TRIGGER " + trigger + "; UPDATE nearpit_" + table + " SET " + change + "; " + sql);
+    const auto problems = file_problems();
+    ASSERT_THAT(problems, SizeIs(1)) << change << "\n" << samples::in_text(problems);
+    EXPECT_EQ(problems[0].kind, "chain");
+    EXPECT_THAT(problems[0].where, StartsWith("revision 1 of writer"));
+    samples::put_bytes(path_, whole);
+  }
+}
+
 // One byte on the disk, behind SQLite's back.
 TEST_F(FileCheck, FindsOneByteChangedOnTheDisk) {
   std::string bytes = samples::bytes_of(path_);

@@ -97,6 +97,41 @@ TEST(SurveyFile, GivesBackRevisionsInTheOrderTaken) {
   EXPECT_EQ(writer->last_hash, chain[4].hash);
 }
 
+TEST(SurveyFile, AWriterBeginsWhereTheChainDoes) {
+  const ScratchFolder scratch;
+  const std::string path = scratch.path("a.gpkg");
+  const FileStart start = samples::utm_start();
+  samples::make_survey(path, start, 0);
+  auto file = SurveyFile::open(path, false);
+  EXPECT_EQ(*file->chain_start(), start_hash(start.survey_id, start.plan, start.drawn));
+  ASSERT_TRUE(samples::append_all(*file, samples::kWriter, {}).ok());
+  const auto writer = *file->writer(samples::kWriter);
+  ASSERT_TRUE(writer.has_value());
+  EXPECT_EQ(writer->last_seq, 0);
+  EXPECT_EQ(writer->last_hash, *file->chain_start());
+}
+
+TEST(SurveyFile, ReadsOneStateWhateverIsWrittenMeanwhile) {
+  const ScratchFolder scratch;
+  const std::string path = scratch.path("a.gpkg");
+  samples::make_survey(path, samples::utm_start(), 2);
+  auto reader = SurveyFile::open(path, true);
+  const Status read = reader->read_as_one([&]() -> Status {
+    EXPECT_EQ(*reader->last_rowid(), 2);
+    // A reader holds off the other's commit; what the other wrote does not show.
+    ForeignProgram other(path);
+    EXPECT_EQ(other.run("BEGIN IMMEDIATE; INSERT INTO nearpit_writer VALUES (9, 'x', 'y', 0, 0);"), "");
+    EXPECT_EQ(other.run("COMMIT"), "database is locked");
+    EXPECT_FALSE(reader->writer("x")->has_value());
+    return ok_status();
+  });
+  EXPECT_TRUE(read.ok()) << read.error().one_line();
+  EXPECT_EQ(reader->read_as_one([] { return Status(Error(ErrorKind::kConflict, "no")); }).error().kind,
+            ErrorKind::kConflict);
+  EXPECT_EQ(ForeignProgram(path).run("INSERT INTO nearpit_writer VALUES (9, 'x', 'y', 0, 0)"), "");
+  EXPECT_TRUE(reader->writer("x")->has_value());
+}
+
 TEST(SurveyFile, EachRevisionStopsAtTheFirstErrorOfTheTaker) {
   const ScratchFolder scratch;
   const std::string path = scratch.path("a.gpkg");

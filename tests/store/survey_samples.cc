@@ -121,8 +121,9 @@ LayerRows sample_layers(const FileStart& start) {
 }
 
 std::vector<Revision> chain_of(const std::string& writer, int count) {
+  const FileStart start = utm_start();  // a local grid's chains begin alike
   std::vector<Revision> chain;
-  std::string last;
+  std::string last = start_hash(start.survey_id, start.plan, start.drawn);
   for (int i = 1; i <= count; ++i) {
     Revision revision;
     std::ostringstream id;

@@ -40,7 +40,7 @@ MultiPolygon square(double x, double y, double side);
 
 extern const char* const kWriter;
 extern const char* const kOtherWriter;
-// `count` revisions of one writer, seq from 1, hashes chained, the second naming the first as parent.
+// `count` revisions of one writer, seq from 1, hashes chained from the start of the two surveys above; the second and third name parents.
 std::vector<Revision> chain_of(const std::string& writer, int count);
 
 // The survey with one writer and `count` revisions at `path`.
