@@ -82,8 +82,7 @@ class Commands(unittest.TestCase):
 
     def test_new_warns_of_one_drawn_unit(self):
         made = self.bench.new(small_plan(initial={"draw": "transects", "count": {"all": 1}, "seed": 7}), "thin.gpkg")
-        self.assertEqual(made.lines, ["note: only 1 of 5 transects drawn: no standard error or likely range can be given; "
-                                      "draw 2 or more"])
+        self.assertEqual(made.lines, ["note: only 1 of 5 transects drawn: no likely range can be given; draw 2 or more"])
 
     # ---- next ----
 
