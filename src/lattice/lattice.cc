@@ -26,7 +26,7 @@ double row_shift(const Lattice& lattice, std::int32_t row) {
 }
 
 std::int32_t clamped(double value) {
-  constexpr double kMost = std::numeric_limits<std::int32_t>::max() / 2;
+  constexpr double kMost = std::numeric_limits<std::int32_t>::max() / 2.0;
   if (!(value > -kMost)) return static_cast<std::int32_t>(-kMost);
   return static_cast<std::int32_t>(value < kMost ? value : kMost);
 }

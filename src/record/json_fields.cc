@@ -120,6 +120,7 @@ Error Findings::error() const {
   auto sorted = list_;
   std::stable_sort(sorted.begin(), sorted.end(), [](const auto& a, const auto& b) { return a.first < b.first; });
   std::vector<std::string> lines;
+  lines.reserve(sorted.size());
   for (auto& [line, text] : sorted)
     lines.push_back(std::move(text));
   return {ErrorKind::kBadInput, std::move(lines)};
