@@ -1,7 +1,7 @@
 #!/usr/bin/env bash
 # bash tests/run.sh [--asan]: installs what the tests need, builds, checks format and clang-tidy's short list, runs every
-# test. With --asan the tests written in C++ are built and run with the address and undefined behaviour sanitizers instead
-# (half the compiling); those that play the real program stay as they are. Exit 0 when all pass.
+# test. With --asan all of it is built and run with the address and undefined behaviour sanitizers instead (build/asan);
+# the benchmarks are then left out. Exit 0 when all pass.
 set -euo pipefail
 . "$(dirname "$0")/support/setup.sh"
 cd "$source_dir"
@@ -26,7 +26,7 @@ check_format() {
 
 check_tidy() {
   say "clang-tidy: the short list of .clang-tidy over src"
-  /usr/bin/python3 tests/support/tidy.py build/dev || failures+=("clang-tidy")
+  /usr/bin/python3 tests/support/tidy.py "build/$1" || failures+=("clang-tidy")
 }
 
 # run_tests PRESET: all tests of that build, in parallel; shows what failed and adds to passed and failed.
@@ -47,19 +47,17 @@ started=$SECONDS
 say "Nearpit's tests: packages, build, format, clang-tidy, tests"
 install_missing run test
 check_format
-unit_tests=ON
-[ "$with_asan" = no ] || unit_tests=OFF
-say "building build/dev"
-configure dev -DNEARPIT_TESTS=ON -DNEARPIT_UNIT_TESTS=$unit_tests -DNEARPIT_BENCH=$unit_tests
-build dev
-run_tests dev
-check_tidy
+preset=dev
+bench=ON
 if [ "$with_asan" = yes ]; then
-  say "building build/asan (address and undefined behaviour sanitizers)"
-  configure asan -DNEARPIT_SCRIPT_TESTS=OFF
-  build asan
-  run_tests asan
+  preset=asan
+  bench=OFF
 fi
+say "building build/$preset"
+configure "$preset" -DNEARPIT_TESTS=ON -DNEARPIT_BENCH=$bench
+build "$preset"
+run_tests "$preset"
+check_tidy "$preset"
 
 say "took $((SECONDS - started)) s"
 for failure in ${failures[@]+"${failures[@]}"}; do

@@ -2,6 +2,7 @@
 
 #include <memory>
 
+#include "cli/command.h"
 #include "session/take_files.h"
 
 namespace nearpit::cli {
@@ -30,14 +31,13 @@ int run_act(const ActOptions& options) {
 
 }  // namespace
 
-void add_act(CLI::App& program, Run* run) {
+void add_act(CommandLine& line) {
   auto options = std::make_shared<ActOptions>();
-  CLI::App* command =
-      program.add_subcommand("act", "carry out actions: withdraw, belongs_to, ask_neighbours, close_area, reopen_area");
-  add_file(command, &options->file);
-  command->add_option("ACTION", options->action, "one action or a list of them (JSON)")->required();
-  command->add_flag("--all-errors", options->all_errors, "every finding on a line of its own");
-  command->callback([options, run] { *run = [options] { return run_act(*options); }; });
+  line.command("act", "carry out actions: withdraw, belongs_to, ask_neighbours, close_area, reopen_area")
+      .survey_file(&options->file)
+      .word("ACTION", &options->action, "one action or a list of them (JSON)")
+      .flag("--all-errors", &options->all_errors, "every finding on a line of its own")
+      .run([options] { return run_act(*options); });
 }
 
 }  // namespace nearpit::cli

@@ -1,7 +1,9 @@
 #include "cli/check_command.h"
 
 #include <memory>
+#include <nlohmann/json.hpp>
 
+#include "cli/command.h"
 #include "session/session.h"
 
 namespace nearpit::cli {
@@ -62,13 +64,13 @@ int run_check(const CheckOptions& options) {
 
 }  // namespace
 
-void add_check(CLI::App& program, Run* run) {
+void add_check(CommandLine& line) {
   auto options = std::make_shared<CheckOptions>();
-  CLI::App* command = program.add_subcommand("check", "is the file whole, is the record complete");
-  add_file(command, &options->file);
-  command->add_flag("--json", options->json, "one JSON object");
-  command->add_flag("--all-errors", options->all_errors, "every finding on a line of its own");
-  command->callback([options, run] { *run = [options] { return run_check(*options); }; });
+  line.command("check", "is the file whole, is the record complete")
+      .survey_file(&options->file)
+      .flag("--json", &options->json, "one JSON object")
+      .flag("--all-errors", &options->all_errors, "every finding on a line of its own")
+      .run([options] { return run_check(*options); });
 }
 
 }  // namespace nearpit::cli

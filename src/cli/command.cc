@@ -1,16 +1,11 @@
 #include "cli/command.h"
 
 #include <cstdio>
+#include <nlohmann/json.hpp>
 
 #include "base/text.h"
 
 namespace nearpit::cli {
-
-CLI::Option* add_file(CLI::App* command, std::string* file) {
-  return command->add_option("FILE", *file, "the survey file (.gpkg)")->required()->check([](const std::string& text) {
-    return text.ends_with(".gpkg") ? std::string() : in_quotes(text) + " doesn't end in .gpkg";
-  });
-}
 
 int fail(const Error& error, bool all_errors) {
   if (all_errors) {

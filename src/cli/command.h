@@ -1,10 +1,8 @@
-// What every command shares: its place in the argument parser, its way of ending, and its output.
+// What every command shares: its way of ending, and its output.
 #ifndef NEARPIT_CLI_COMMAND_H_
 #define NEARPIT_CLI_COMMAND_H_
 
-#include <CLI/CLI.hpp>
-#include <functional>
-#include <nlohmann/json.hpp>
+#include <nlohmann/json_fwd.hpp>
 #include <string>
 
 #include "base/status.h"
@@ -15,12 +13,7 @@ constexpr int kDone = 0;
 constexpr int kFailed = 1;
 constexpr int kWrongUsage = 2;
 
-// A command adds itself to the program and sets `run` when the arguments name it; main() then runs it.
-using Run = std::function<int()>;
 using Json = nlohmann::ordered_json;
-
-// A FILE argument: refuses (wrong usage) what does not end in .gpkg.
-CLI::Option* add_file(CLI::App* command, std::string* file);
 
 // One line on standard error ('… and n more'), or all of them; returns kFailed.
 int fail(const Error& error, bool all_errors = false);

@@ -2,6 +2,7 @@
 
 #include <memory>
 
+#include "cli/command.h"
 #include "session/take_files.h"
 
 namespace nearpit::cli {
@@ -29,13 +30,13 @@ int run_log(const LogOptions& options) {
 
 }  // namespace
 
-void add_log(CLI::App& program, Run* run) {
+void add_log(CommandLine& line) {
   auto options = std::make_shared<LogOptions>();
-  CLI::App* command = program.add_subcommand("log", "record pits from a table, all or nothing");
-  add_file(command, &options->file);
-  command->add_option("PITS", options->table, "the table of pits (CSV)")->required();
-  command->add_flag("--all-errors", options->all_errors, "every finding on a line of its own");
-  command->callback([options, run] { *run = [options] { return run_log(*options); }; });
+  line.command("log", "record pits from a table, all or nothing")
+      .survey_file(&options->file)
+      .word("PITS", &options->table, "the table of pits (CSV)")
+      .flag("--all-errors", &options->all_errors, "every finding on a line of its own")
+      .run([options] { return run_log(*options); });
 }
 
 }  // namespace nearpit::cli

@@ -4,6 +4,7 @@
 
 #include "base/numbers.h"
 #include "base/text.h"
+#include "cli/command.h"
 #include "session/make_survey.h"
 
 namespace nearpit::cli {
@@ -39,13 +40,13 @@ int run_new(const NewOptions& options) {
 
 }  // namespace
 
-void add_new(CLI::App& program, Run* run) {
+void add_new(CommandLine& line) {
   auto options = std::make_shared<NewOptions>();
-  CLI::App* command = program.add_subcommand("new", "make the survey file and draw the first sample");
-  command->add_option("PLAN", options->plan, "the plan (JSON)")->required();
-  add_file(command, &options->file);
-  command->add_flag("--all-errors", options->all_errors, "every finding on a line of its own");
-  command->callback([options, run] { *run = [options] { return run_new(*options); }; });
+  line.command("new", "make the survey file and draw the first sample")
+      .word("PLAN", &options->plan, "the plan (JSON)")
+      .survey_file(&options->file)
+      .flag("--all-errors", &options->all_errors, "every finding on a line of its own")
+      .run([options] { return run_new(*options); });
 }
 
 }  // namespace nearpit::cli

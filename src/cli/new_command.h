@@ -2,11 +2,11 @@
 #ifndef NEARPIT_CLI_NEW_COMMAND_H_
 #define NEARPIT_CLI_NEW_COMMAND_H_
 
-#include "cli/command.h"
+#include "cli/command_line.h"
 
 namespace nearpit::cli {
 
-void add_new(CLI::App& program, Run* run);
+void add_new(CommandLine& line);
 
 }  // namespace nearpit::cli
 

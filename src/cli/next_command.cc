@@ -2,10 +2,12 @@
 
 #include <algorithm>
 #include <memory>
+#include <nlohmann/json.hpp>
 #include <optional>
 
 #include "base/numbers.h"
 #include "base/text.h"
+#include "cli/command.h"
 #include "session/session.h"
 
 namespace nearpit::cli {
@@ -114,14 +116,14 @@ int run_next(const NextOptions& options) {
 
 }  // namespace
 
-void add_next(CLI::App& program, Run* run) {
+void add_next(CommandLine& line) {
   auto options = std::make_shared<NextOptions>();
-  CLI::App* command = program.add_subcommand("next", "pits to dig, in walking order, with why");
-  add_file(command, &options->file);
-  command->add_option("--crew", options->crew, "start where this crew dug last")->type_name("NAME");
-  command->add_option("--from", options->from, "start at X,Y (metres) or at a pit")->type_name("PLACE");
-  command->add_flag("--json", options->json, "one JSON object");
-  command->callback([options, run] { *run = [options] { return run_next(*options); }; });
+  line.command("next", "pits to dig, in walking order, with why")
+      .survey_file(&options->file)
+      .option("--crew", "NAME", &options->crew, "start where this crew dug last")
+      .option("--from", "PLACE", &options->from, "start at X,Y (metres) or at a pit")
+      .flag("--json", &options->json, "one JSON object")
+      .run([options] { return run_next(*options); });
 }
 
 }  // namespace nearpit::cli

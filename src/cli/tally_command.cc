@@ -4,6 +4,7 @@
 
 #include "base/clock.h"
 #include "base/text.h"
+#include "cli/command.h"
 #include "cli/tally_json.h"
 #include "cli/tally_text.h"
 #include "session/session.h"
@@ -16,6 +17,10 @@ struct TallyOptions {
   std::string day;
   bool json = false;
 };
+
+std::string day_problem(const std::string& day) {
+  return is_date(day) ? "" : in_quotes(day) + " is no date; legal: a day such as 2026-05-04";
+}
 
 int run_tally(const TallyOptions& options) {
   auto environment = real_environment();
@@ -30,17 +35,13 @@ int run_tally(const TallyOptions& options) {
 
 }  // namespace
 
-void add_tally(CLI::App& program, Run* run) {
+void add_tally(CommandLine& line) {
   auto options = std::make_shared<TallyOptions>();
-  CLI::App* command = program.add_subcommand("tally", "the day's figures");
-  add_file(command, &options->file);
-  command->add_option("--day", options->day, "only records written up to this day (2026-05-04)")
-      ->type_name("DATE")
-      ->check([](const std::string& day) {
-        return is_date(day) ? std::string() : in_quotes(day) + " is no date; legal: a day such as 2026-05-04";
-      });
-  command->add_flag("--json", options->json, "one JSON object");
-  command->callback([options, run] { *run = [options] { return run_tally(*options); }; });
+  line.command("tally", "the day's figures")
+      .survey_file(&options->file)
+      .option("--day", "DATE", &options->day, "only records written up to this day (2026-05-04)", day_problem)
+      .flag("--json", &options->json, "one JSON object")
+      .run([options] { return run_tally(*options); });
 }
 
 }  // namespace nearpit::cli

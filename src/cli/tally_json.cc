@@ -1,5 +1,6 @@
 #include "cli/tally_json.h"
 
+#include <nlohmann/json.hpp>
 #include <string>
 
 namespace nearpit::cli {
