@@ -23,7 +23,7 @@ std::string summary(const MadeSurvey& made, const std::string& file) {
   text += "  " + std::to_string(made.first_sample) + " grid pits to dig first\n";
   for (const MadeArea& area : made.areas) {
     text += "    " + area.name + ": " + std::to_string(area.drawn) + " of " + std::to_string(area.primary_units) + " " +
-            (made.draw == "systematic" ? "systematic starts" : made.draw) + "\n";
+            made.units + "\n";
   }
   return text;
 }

@@ -2,10 +2,6 @@
 
 #include <algorithm>
 #include <array>
-#include <boost/geometry.hpp>
-#include <boost/geometry/geometries/multi_polygon.hpp>
-#include <boost/geometry/geometries/point_xy.hpp>
-#include <boost/geometry/geometries/polygon.hpp>
 #include <cmath>
 #include <optional>
 #include <utility>
@@ -18,64 +14,8 @@
 namespace nearpit {
 namespace {
 
-namespace bg = boost::geometry;
-using BoostPoint = bg::model::d2::point_xy<double>;
-using BoostPolygon = bg::model::polygon<BoostPoint, false, false>;
-using BoostMulti = bg::model::multi_polygon<BoostPolygon>;
-
 constexpr std::size_t kMostFeatures = 1'000;
 constexpr std::string_view kLegalTypes = "Polygon, MultiPolygon, or a Feature or FeatureCollection of them";
-
-BoostMulti to_boost(const MultiPolygon& polygons) {
-  BoostMulti multi;
-  for (const Polygon& polygon : polygons) {
-    BoostPolygon& out = multi.emplace_back();
-    for (const Point& point : polygon.outer)
-      out.outer().emplace_back(point.x, point.y);
-    for (const Ring& hole : polygon.holes) {
-      out.inners().emplace_back();
-      for (const Point& point : hole)
-        out.inners().back().emplace_back(point.x, point.y);
-    }
-  }
-  bg::correct(multi);
-  return multi;
-}
-
-MultiPolygon from_boost(const BoostMulti& multi) {
-  const auto ring_of = [](const auto& points) {
-    Ring ring;
-    for (const BoostPoint& point : points)
-      ring.push_back({point.x(), point.y()});
-    return ring;
-  };
-  MultiPolygon polygons;
-  for (const BoostPolygon& polygon : multi) {
-    polygons.push_back({ring_of(polygon.outer()), {}});
-    for (const auto& hole : polygon.inners())
-      polygons.back().holes.push_back(ring_of(hole));
-  }
-  return polygons;
-}
-
-// In pairs, then pairs of pairs, so that no part is gone through more often than the logarithm of their number.
-MultiPolygon united(const std::vector<MultiPolygon>& parts) {
-  if (parts.size() == 1) return parts.front();
-  std::vector<BoostMulti> left;
-  for (const MultiPolygon& part : parts)
-    left.push_back(to_boost(part));
-  while (left.size() > 1) {
-    std::vector<BoostMulti> next;
-    for (std::size_t i = 0; i + 1 < left.size(); i += 2) {
-      BoostMulti both;
-      bg::union_(left[i], left[i + 1], both);
-      next.push_back(std::move(both));
-    }
-    if (left.size() % 2 == 1) next.push_back(std::move(left.back()));
-    left = std::move(next);
-  }
-  return from_boost(left.front());
-}
 
 // Where in nested coordinates the first position stands that is no longitude and latitude.
 struct OutOfRange {

@@ -1,19 +1,9 @@
 #include "lattice/cells.h"
 
 #include <algorithm>
-#include <boost/geometry.hpp>
-#include <boost/geometry/geometries/multi_polygon.hpp>
-#include <boost/geometry/geometries/point_xy.hpp>
-#include <boost/geometry/geometries/polygon.hpp>
-#include <span>
 
 namespace nearpit {
 namespace {
-
-namespace bg = boost::geometry;
-using BoostPoint = bg::model::d2::point_xy<double>;
-using BoostPolygon = bg::model::polygon<BoostPoint, false, false>;
-using BoostMulti = bg::model::multi_polygon<BoostPolygon>;
 
 // Nodes first..last of one row, side by side.
 struct CellRun {
@@ -37,45 +27,29 @@ std::vector<CellRun> runs_of(std::vector<Node> nodes) {
 }
 
 // Whole numbers of half spacings and half row distances: every corner is exact, so shared sides cancel exactly.
-BoostPolygon half_steps_rectangle(const Lattice& lattice, const CellRun& run) {
+MultiPolygon half_steps_rectangle(const Lattice& lattice, const CellRun& run) {
   const double shift = lattice.rows_shift() && run.first.row % 2 == 0 ? 1 : 0;
   const double from = 2.0 * (run.first.column - 1) + shift - 1;
   const double to = 2.0 * (run.last_column - 1) + shift + 1;
   const double v = 2.0 * (run.first.row - 1);
-  BoostPolygon rectangle;
-  rectangle.outer() = {{from, v - 1}, {to, v - 1}, {to, v + 1}, {from, v + 1}};
-  return rectangle;
-}
-
-BoostMulti united(const Lattice& lattice, std::span<const CellRun> runs) {
-  BoostMulti out;
-  if (runs.size() == 1) {
-    out.push_back(half_steps_rectangle(lattice, runs.front()));
-  } else if (runs.size() > 1) {
-    const std::size_t half = runs.size() / 2;
-    bg::union_(united(lattice, runs.first(half)), united(lattice, runs.subspan(half)), out);
-  }
-  return out;
+  return {{{{from, v - 1}, {to, v - 1}, {to, v + 1}, {from, v + 1}}, {}}};
 }
 
 }  // namespace
 
 MultiPolygon cells_outline(const Lattice& lattice, const std::vector<Node>& nodes) {
-  const auto ring_of = [&](const auto& ring) {
-    Ring out;
-    for (const BoostPoint& corner : ring) {
-      out.push_back(
-          lattice.to_ground(Along{corner.x() * lattice.spacing_m / 2, corner.y() * lattice.row_distance_m() / 2}));
-    }
-    return out;
+  std::vector<MultiPolygon> rectangles;
+  for (const CellRun& run : runs_of(nodes))
+    rectangles.push_back(half_steps_rectangle(lattice, run));
+  MultiPolygon outline = united(rectangles);
+  const auto to_ground = [&](Ring& ring) {
+    for (Point& corner : ring)
+      corner = lattice.to_ground(Along{corner.x * lattice.spacing_m / 2, corner.y * lattice.row_distance_m() / 2});
   };
-  MultiPolygon outline;
-  const std::vector<CellRun> runs = runs_of(nodes);
-  for (const BoostPolygon& polygon : united(lattice, runs)) {
-    Polygon out{ring_of(polygon.outer()), {}};
-    for (const auto& hole : polygon.inners())
-      out.holes.push_back(ring_of(hole));
-    outline.push_back(std::move(out));
+  for (Polygon& polygon : outline) {
+    to_ground(polygon.outer);
+    for (Ring& hole : polygon.holes)
+      to_ground(hole);
   }
   return outline;
 }

@@ -6,6 +6,7 @@
 #include <boost/geometry/geometries/point_xy.hpp>
 #include <boost/geometry/geometries/polygon.hpp>
 #include <cmath>
+#include <utility>
 
 namespace nearpit {
 namespace {
@@ -36,6 +37,22 @@ BoostMulti converted(const MultiPolygon& polygons, const Point& zero) {
   }
   bg::correct(multi);
   return multi;
+}
+
+MultiPolygon converted_back(const BoostMulti& multi) {
+  const auto ring_of = [](const auto& points) {
+    Ring ring;
+    for (const BoostPoint& point : points)
+      ring.push_back({point.x(), point.y()});
+    return ring;
+  };
+  MultiPolygon polygons;
+  for (const BoostPolygon& polygon : multi) {
+    polygons.push_back({ring_of(polygon.outer()), {}});
+    for (const auto& hole : polygon.inners())
+      polygons.back().holes.push_back(ring_of(hole));
+  }
+  return polygons;
 }
 
 std::string in_words(bg::validity_failure_type failure) {
@@ -92,6 +109,25 @@ double common_area_m2(const MultiPolygon& first, const MultiPolygon& second) {
   BoostMulti common;
   bg::intersection(converted(first, zero), converted(second, zero), common);
   return bg::area(common);
+}
+
+// In pairs, then pairs of pairs, so that no part is gone through more often than the logarithm of their number.
+MultiPolygon united(const std::vector<MultiPolygon>& parts) {
+  if (parts.size() == 1) return parts.front();
+  std::vector<BoostMulti> left;
+  for (const MultiPolygon& part : parts)
+    left.push_back(converted(part, {0, 0}));
+  while (left.size() > 1) {
+    std::vector<BoostMulti> next;
+    for (std::size_t i = 0; i + 1 < left.size(); i += 2) {
+      BoostMulti both;
+      bg::union_(left[i], left[i + 1], both);
+      next.push_back(std::move(both));
+    }
+    if (left.size() % 2 == 1) next.push_back(std::move(left.back()));
+    left = std::move(next);
+  }
+  return left.empty() ? MultiPolygon{} : converted_back(left.front());
 }
 
 Box bounding_box(const MultiPolygon& polygons) {

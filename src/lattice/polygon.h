@@ -34,6 +34,8 @@ std::optional<std::string> polygon_problem(const MultiPolygon& polygons);
 double area_m2(const MultiPolygon& polygons);
 // Square metres that two have in common.
 double common_area_m2(const MultiPolygon& first, const MultiPolygon& second);
+// The union of parts that may touch or overlap; a part alone comes back as it is. Corners that no crossing makes keep their numbers.
+MultiPolygon united(const std::vector<MultiPolygon>& parts);
 // Of all outer points; not for an empty list.
 Box bounding_box(const MultiPolygon& polygons);
 // Inside, on the line, or within `tolerance_m` of it.

@@ -64,22 +64,6 @@ std::string dotted(const std::string& pointer) {
   return out;
 }
 
-std::string child_pointer(const std::string& pointer, std::string_view key) {
-  std::string out = pointer + "/";
-  for (const char c : key) {
-    if (c == '~' || c == '/') {
-      out += c == '~' ? "~0" : "~1";
-    } else {
-      out += c;
-    }
-  }
-  return out;
-}
-
-std::string child_pointer(const std::string& pointer, std::size_t index) {
-  return pointer + "/" + std::to_string(index);
-}
-
 std::string shown(const Json& value) {
   if (value.is_string()) return in_quotes(value.get_ref<const std::string&>());
   if (value.is_array()) return value.empty() ? "[]" : "[…]";

@@ -19,9 +19,6 @@ namespace nearpit {
 
 // "/initial/count/all" -> "initial.count.all"; "" -> "".
 std::string dotted(const std::string& pointer);
-// "~" and "/" of a key are written ~0 and ~1 in a pointer.
-std::string child_pointer(const std::string& pointer, std::string_view key);
-std::string child_pointer(const std::string& pointer, std::size_t index);
 // A value as an error line shows it: numbers and words whole, long texts cut, lists and objects as […] and {…}.
 std::string shown(const Json& value);
 // "a", "b", "c".

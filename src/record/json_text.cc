@@ -62,21 +62,6 @@ class LineCounter {
 
 int line_of_offset(std::string_view text, std::size_t offset) { return LineCounter(text).line_at(offset); }
 
-// One part of a JSON pointer: '~' and '/' are written ~0 and ~1 (RFC 6901 section 3).
-std::string escaped(const std::string& key) {
-  std::string out;
-  for (const char c : key) {
-    if (c == '~') {
-      out += "~0";
-    } else if (c == '/') {
-      out += "~1";
-    } else {
-      out += c;
-    }
-  }
-  return out;
-}
-
 // An object or array that is not closed yet.
 struct OpenValue {
   Json* value = nullptr;
@@ -181,9 +166,9 @@ class DocumentBuilder {
   void keep_line(const OpenValue& in, int line) {
     last_line_ = in.line;
     if (open_.size() > kDeepestLine) return;
-    const std::string part =
-        in.value->is_object() ? escaped(in.key) : std::to_string(in.value->get_ref<const Json::array_t&>().size() - 1);
-    last_pointer_ = in.pointer + "/" + part;
+    last_pointer_ = in.value->is_object()
+                        ? child_pointer(in.pointer, in.key)
+                        : child_pointer(in.pointer, in.value->get_ref<const Json::array_t&>().size() - 1);
     last_line_ = line;
     if (line != in.line) document_->line_of.emplace(last_pointer_, line);
     if (in.value->is_object()) {
@@ -248,6 +233,22 @@ Error refused(const std::string& file, int line, const std::string& what) {
 }
 
 }  // namespace
+
+std::string child_pointer(const std::string& pointer, std::string_view key) {
+  std::string out = pointer + "/";
+  for (const char c : key) {
+    if (c == '~' || c == '/') {
+      out += c == '~' ? "~0" : "~1";
+    } else {
+      out += c;
+    }
+  }
+  return out;
+}
+
+std::string child_pointer(const std::string& pointer, std::size_t index) {
+  return pointer + "/" + std::to_string(index);
+}
 
 int JsonDocument::line(const std::string& pointer) const {
   for (std::string at = pointer;; at.resize(at.rfind('/'))) {

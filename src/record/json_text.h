@@ -32,6 +32,10 @@ struct JsonDocument {
   int key_line(const std::string& pointer) const;
 };
 
+// A step down a JSON pointer: "~" and "/" of a key are written ~0 and ~1 (RFC 6901 section 3).
+std::string child_pointer(const std::string& pointer, std::string_view key);
+std::string child_pointer(const std::string& pointer, std::size_t index);
+
 // A byte-order mark is accepted. Errors: "FILE:LINE: what; what to do".
 Result<JsonDocument> read_json(std::string_view text, const std::string& file, const JsonLimits& limits = {});
 

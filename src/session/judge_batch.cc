@@ -166,13 +166,13 @@ Status BatchJudge::carry_out(const BelongsTo& given, const Action& action) {
   if (other->node == kNoNode && (!record.place || record.chosen_by != ChosenBy::kJudgement)) {
     return bad("other: " + in_quotes(other->label) + " is no pit of the grid; legal: a pit such as " + model_.label(0));
   }
+  PitRecord gone = record;
+  gone.status = PitStatus::kWithdrawn;
   if (other->node != kNoNode && record.place && record.moved.empty()) record.moved = action.why;
   if (const Status fits = check_place(model_, *other, record); !fits) {
     return bad("other: the record does not fit " + other->label + ": " + fits.error().lines.front());
   }
   remember_recorded(*other, "other", record.chosen_by, action.origin);
-  PitRecord gone = record;
-  gone.status = PitStatus::kWithdrawn;
   NEARPIT_TRY(write_pit(pit, gone, action.by, action.why));
   return write_pit(*other, record, action.by, action.why);
 }

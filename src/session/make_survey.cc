@@ -55,7 +55,7 @@ MadeSurvey summary(const SurveyModel& model) {
   const SurveyGround& ground = model.survey().ground();
   MadeSurvey made;
   made.survey = model.plan().survey;
-  made.draw = draw_kind_name(ground.units.kind);
+  made.units = unit_word(ground.units.kind, true);
   made.pits = ground.frame.size();
   made.first_sample = ground.sample.nodes;
   made.boundary_m2 = area_m2(model.plan().boundary);

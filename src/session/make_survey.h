@@ -18,7 +18,7 @@ struct MadeArea {
 
 struct MadeSurvey {
   std::string survey;
-  std::string draw;       // pits, transects, systematic
+  std::string units;      // what the areas' primary units are called: pits, transects, systematic starts
   std::int64_t pits = 0;  // of the frame
   std::int64_t first_sample = 0;
   double boundary_m2 = 0;

@@ -105,9 +105,9 @@ Result<Applied> Session::apply(const std::vector<Action>& actions) {
       NEARPIT_TRY(transaction.append(revision));
     NEARPIT_TRY(
         transaction.update_layers(layer_changes(*model_, batch.changed_nodes(), batch.changed_objects()), maker.now()));
-    const Status kept =
-        environment_->memory.remember(survey_id_, {writer.row.id, writer.row.last_hash, maker.last_hash()});
-    if (!kept) applied.notes.push_back(unremembered(kept.error()));
+    // If the power goes now, either hash is this writer's. That it could not be kept is said below, if it still holds then.
+    static_cast<void>(
+        environment_->memory.remember(survey_id_, {writer.row.id, writer.row.last_hash, maker.last_hash()}));
     NEARPIT_ASSIGN(last, file_.last_rowid());
     NEARPIT_TRY(transaction.commit());
     last_rowid_ = last;
@@ -119,7 +119,7 @@ Result<Applied> Session::apply(const std::vector<Action>& actions) {
   }
   // The records are on the disk: nothing from here on may say otherwise.
   const Status kept = environment_->memory.remember(survey_id_, {writer.row.id, maker.last_hash(), maker.last_hash()});
-  if (!kept && applied.notes.empty()) applied.notes.push_back(unremembered(kept.error()));
+  if (!kept) applied.notes.push_back(unremembered(kept.error()));
   for (const Revision& revision : batch.revisions())
     log_.add(revision);
   log_.take_changed();  // the model holds them already

@@ -7,6 +7,7 @@
 #include "store/schema_check.h"
 #include "store/schema_files.h"
 #include "store/survey_handle.h"
+#include "store/survey_open.h"
 
 namespace nearpit {
 namespace {
@@ -16,8 +17,6 @@ using store::Findings;
 using store::Statement;
 
 constexpr std::size_t kMost = 100;
-constexpr std::int64_t kGeoPackageId = 1196444487;
-constexpr std::int64_t kGeoPackageVersion = 10300;
 constexpr const char* kUseCopy = "keep the file as it is, don't write to it, and go on with the last good copy";
 
 // `take` gets each row of a pragma that lists what is wrong.
@@ -61,8 +60,8 @@ std::vector<FileProblem> check_file(SurveyFile& file) {
   std::vector<FileProblem> problems;
   Findings findings(kMost);
   check_pages(db, findings);
-  check_number(db, "PRAGMA application_id", kGeoPackageId, findings);
-  check_number(db, "PRAGMA user_version", kGeoPackageVersion, findings);
+  check_number(db, "PRAGMA application_id", store::kGeoPackageId, findings);
+  check_number(db, "PRAGMA user_version", store::kGeoPackageVersion, findings);
   findings.move_to(problems, "pages", "database");
   if (file.handle().too_new) {
     problems.push_back({"schema", "nearpit_schema",

@@ -2,6 +2,7 @@
 
 #include <sys/stat.h>
 
+#include <algorithm>
 #include <utility>
 
 #include "base/text.h"
@@ -158,14 +159,16 @@ Result<std::optional<WriterRow>> SurveyFile::writer(const std::string& id) {
   writer.add(id);
   NEARPIT_ASSIGN(known, writer.next());
   if (!known) return std::optional<WriterRow>();
-  NEARPIT_ASSIGN(start, chain_start());
-  WriterRow found{id, writer.text(0), 0, std::move(start)};
+  WriterRow found{id, writer.text(0), 0, ""};
   Statement last(handle_->db, "SELECT seq, hash FROM nearpit_revision WHERE writer = ?1 ORDER BY seq DESC LIMIT 1");
   last.add(id);
   NEARPIT_ASSIGN(wrote, last.next());
   if (wrote) {
     found.last_seq = last.integer(0);
     found.last_hash = last.text(1);
+  } else {
+    NEARPIT_ASSIGN(start, chain_start());
+    found.last_hash = std::move(start);
   }
   return std::optional<WriterRow>(std::move(found));
 }

@@ -13,8 +13,6 @@
 namespace nearpit::store {
 namespace {
 
-constexpr std::int64_t kGeoPackageId = 1196444487;
-
 // The real path: links in the folder's path are followed, the file itself must be no link.
 Result<std::string> regular_file(const std::string& path) {
   struct stat found {};

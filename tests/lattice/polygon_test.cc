@@ -121,5 +121,23 @@ TEST(Polygon, CoversAsTheDistanceSays) {
   }
 }
 
+TEST(Polygon, UnitedLeavesNothingOutAndCountsNothingTwice) {
+  const auto square = [](double x, double y) {
+    return MultiPolygon{{{{x, y}, {x + 2, y}, {x + 2, y + 2}, {x, y + 2}}, {}}};
+  };
+  EXPECT_TRUE(united({}).empty());
+  EXPECT_EQ(united({square(0, 0)}).front().outer, square(0, 0).front().outer);
+  EXPECT_DOUBLE_EQ(area_m2(united({square(0, 0), square(1, 1)})), 7);
+  EXPECT_EQ(united({square(0, 0), square(2, 0), square(4, 0)}).size(), 1U);
+  EXPECT_EQ(united({square(0, 0), square(9, 0), square(0, 9)}).size(), 3U);
+  std::vector<MultiPolygon> ring;
+  for (const Point& at : {Point{0, 0}, {2, 0}, {4, 0}, {0, 2}, {4, 2}, {0, 4}, {2, 4}, {4, 4}})
+    ring.push_back(square(at.x, at.y));
+  const MultiPolygon around = united(ring);
+  ASSERT_EQ(around.size(), 1U);
+  EXPECT_EQ(around.front().holes.size(), 1U);
+  EXPECT_DOUBLE_EQ(area_m2(around), 32);
+}
+
 }  // namespace
 }  // namespace nearpit

@@ -178,6 +178,32 @@ TEST(Session, ARecordThatSaysWorkHadToStopGivesACaution) {
   EXPECT_THAT(applied.notes.front(), HasSubstr("T3-3: possible human remains"));
 }
 
+// What broke: the record taken back got the reason that the other pit needs for its place.
+TEST(Session, ARecordThatBelongsElsewhereIsWithdrawnAsItWas) {
+  TwoDevices devices;
+  Session session = devices.a.open();
+  Action off_grid = dug("J1", 0);
+  RecordPit& record = std::get<RecordPit>(off_grid.what);
+  record.chosen_by = std::optional<ChosenBy>(ChosenBy::kJudgement);
+  record.x = std::optional<double>(26.5);
+  record.y = std::optional<double>(25);
+  session.apply({off_grid}).value();
+  session.apply({{BelongsTo{"J1", "T3-3"}, "A", "it was the grid pit, beside a root", {}}}).value();
+  EXPECT_EQ(record_of(session, "J1").status, PitStatus::kWithdrawn);
+  EXPECT_EQ(record_of(session, "J1").moved, "");
+  EXPECT_EQ(record_of(session, "T3-3").moved, "it was the grid pit, beside a root");
+}
+
+// A device that can't remember who it is still saves, and says once what follows.
+TEST(Session, AWriterThatCantBeRememberedIsSaidOnce) {
+  TwoDevices devices;
+  devices.a.environment.memory = WriterMemory("/dev/null/config");
+  const Applied applied = devices.a.open().apply({dug("T3-3", 0)}).value();
+  ASSERT_THAT(applied.notes, SizeIs(1));
+  EXPECT_THAT(applied.notes.front(), HasSubstr("the records are saved"));
+  EXPECT_EQ(progress(devices.a.open()).dug, 1u);
+}
+
 // A plan changed under the records changes every figure, so the chains begin with it.
 TEST(Session, TheChainsHoldThePlanAndTheDraw) {
   const std::vector<std::vector<std::uint32_t>> drawn{{1, 2}};
