@@ -1,5 +1,7 @@
 #include "session/environment.h"
 
+#include "store/user_folder.h"
+
 namespace nearpit {
 
 Result<Environment> real_environment() {
@@ -7,6 +9,7 @@ Result<Environment> real_environment() {
   Environment environment;
   environment.clock = std::move(clock);
   environment.device = device_name();
+  environment.user_folder = user_folder();
   return environment;
 }
 

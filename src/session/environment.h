@@ -17,6 +17,7 @@ struct Environment {
   UuidSource uuids;
   WriterMemory memory = WriterMemory::of_user();
   std::string device;
+  std::string user_folder;  // where a person's preferences and drafts are kept; empty: nowhere
 
   std::string new_id() { return uuids.next(clock->now().utc_ms); }
 };
