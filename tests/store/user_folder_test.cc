@@ -32,7 +32,7 @@ TEST(UserFolder, SaysWhatItCannotDo) {
   const Status status = replace_user_file(scratch.path("file/nearpit"), "a.json", "x");
   ASSERT_FALSE(status);
   EXPECT_EQ(status.error().kind, ErrorKind::kIo);
-  EXPECT_TRUE(samples::one_line_naming(status.error(), scratch.path("file")));
+  EXPECT_TRUE(samples::one_line_naming(status.error(), scratch.path("file/nearpit")));
   EXPECT_FALSE(replace_user_file("", "a.json", "x"));
   ASSERT_EQ(::mkdir(scratch.path("a.json").c_str(), 0700), 0);
   EXPECT_FALSE(replace_user_file(scratch.folder(), "a.json", "x"));
