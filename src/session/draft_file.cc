@@ -69,6 +69,7 @@ class DraftMembers {
     take(key, &text);
     *value = of(text);
   }
+  bool has(const char* key) const { return find(key) != nullptr; }
   bool ok() const { return ok_; }
 
  private:
@@ -89,6 +90,7 @@ class DraftMembers {
 std::optional<RecordDraft> draft_of(const Json& json) {
   RecordDraft draft;
   DraftMembers members(json);
+  if (!members.has("pit")) return std::nullopt;
   members.take("pit", &draft.pit);
   members.take("based_on", &draft.based_on);
   members.take("amends", &draft.amends);
@@ -102,7 +104,7 @@ std::optional<RecordDraft> draft_of(const Json& json) {
   members.take("judgement", &draft.judgement);
   members.take("started_at", &draft.started_at);
   members.take("why", &draft.why);
-  return members.ok() && !draft.pit.empty() ? std::optional(draft) : std::nullopt;
+  return members.ok() ? std::optional(draft) : std::nullopt;
 }
 
 // Nothing when the text is no list of drafts as this program writes it.

@@ -20,17 +20,26 @@ Error bad(std::string line) { return Error(ErrorKind::kBadInput, std::move(line)
 
 // ---- what stands ----
 
-const Head* standing_head(const PitEntry* entry) {
-  if (entry == nullptr || entry->withdrawn()) return nullptr;
-  const Head& latest = entry->heads[entry->verdict.latest];
-  return latest.record.status == PitStatus::kWithdrawn ? &entry->heads[entry->verdict.counts] : &latest;
+// As judge_record.cc takes it.
+const PitRecord* standing_record(const PitEntry& entry) {
+  if (entry.withdrawn()) return nullptr;
+  const PitRecord& latest = entry.heads[entry.verdict.latest].record;
+  return latest.status == PitStatus::kWithdrawn ? &entry.record() : &latest;
+}
+
+std::string revisions_of(const PitEntry& entry) {
+  std::vector<std::string> ids;
+  for (const Head& head : entry.heads)
+    ids.push_back(head.revision);
+  std::sort(ids.begin(), ids.end());
+  return join(ids, " ");
 }
 
 // A draft's pit in the survey as it is now. `named` is nothing when no pit can have the name.
 struct Ground {
   std::optional<PitName> named;
   const PitRecord* standing = nullptr;
-  std::string revision;  // of what stands
+  std::string revisions;
   bool conflict = false;
   bool amends() const { return standing != nullptr || conflict; }
 };
@@ -39,11 +48,10 @@ Ground ground_of(const SurveyModel& model, const PitName& pit) {
   Ground ground;
   ground.named = pit;
   const PitEntry* entry = model.entry(pit);
-  ground.conflict = entry != nullptr && entry->verdict.conflict != Conflict::kNone;
-  const Head* head = standing_head(entry);
-  if (head == nullptr) return ground;
-  ground.standing = &head->record;
-  ground.revision = head->revision;
+  if (entry == nullptr) return ground;
+  ground.standing = standing_record(*entry);
+  ground.revisions = revisions_of(*entry);
+  ground.conflict = entry->verdict.conflict != Conflict::kNone;
   return ground;
 }
 
@@ -104,7 +112,7 @@ RecordDraft draft_on(const SurveyModel& model, const Ground& ground) {
   if (!ground.named) return draft;
   draft.pit = ground.named->label;
   draft.amends = ground.amends();
-  draft.based_on = ground.revision;
+  draft.based_on = ground.revisions;
   draft.judgement = on_judgement(model, *ground.named);
   if (ground.standing != nullptr) fill_from(*ground.standing, &draft);
   return draft;
@@ -248,7 +256,7 @@ bool says_nothing(const RecordPit& pit) {
 }
 
 bool based_elsewhere(const RecordDraft& draft, const Ground& ground) {
-  return ground.named && (draft.based_on != ground.revision || draft.amends != ground.amends());
+  return ground.named && (draft.based_on != ground.revisions || draft.amends != ground.amends());
 }
 
 }  // namespace
@@ -281,7 +289,7 @@ bool catch_up(RecordDraft* draft, const SurveyModel& model) {
   draft->counts.resize(std::max(draft->counts.size(), model.plan().finds.size()));
   const Ground ground = ground_of(model, draft->pit);
   if (!based_elsewhere(*draft, ground)) return false;
-  draft->based_on = ground.revision;
+  draft->based_on = ground.revisions;
   draft->amends = ground.amends();
   return true;
 }

@@ -23,7 +23,7 @@ namespace nearpit {
 
 struct RecordDraft {
   std::string pit;       // label as the plan writes it, or the free label
-  std::string based_on;  // the revision that stood when the draft was filled; empty: none did
+  std::string based_on;  // ids of the pit's last revisions when the draft was filled; empty: nobody had written of it
   bool amends = false;   // the pit has a record, or records that disagree: this becomes a further revision
   bool not_dug = false;
   std::optional<NotDugReason> reason;  // for not_dug
@@ -45,7 +45,8 @@ RecordDraft new_draft(const SurveyModel& model, const PitName& pit, const WallTi
 // Something was typed that would be lost: the draft differs from what new_draft would give. started_at, judgement and what the draft is based on don't count.
 bool typed_anything(const RecordDraft& draft, const SurveyModel& model);
 
-// Another record of the pit stands now than when the draft was filled (another program, another tablet's file).
+// Somebody wrote of the pit since the draft was filled (another program, another tablet's file; or a crash came between a save and the removal of its
+// draft: then typed_anything says that nothing would be lost).
 bool overtaken(const RecordDraft& draft, const SurveyModel& model);
 // Bases the draft on what stands now and keeps everything typed; true when it was overtaken, so that the person is told. To be called for drafts read
 // from a file and after changes of the survey by others.

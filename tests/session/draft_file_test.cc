@@ -51,7 +51,7 @@ TEST(DraftFile, ComesBackAsItWasWritten) {
   EXPECT_THAT(file.read(), IsEmpty());
   RecordDraft blank;
   blank.pit = "Яма";
-  const std::vector<RecordDraft> drafts{half_typed(), blank};
+  const std::vector<RecordDraft> drafts{half_typed(), blank, RecordDraft()};
   ASSERT_TRUE(file.write(drafts));
   EXPECT_THAT(DraftFile(folder.path("config"), kSurvey).read(), ElementsAreArray(drafts));
   EXPECT_THAT(DraftFile(folder.path("config"), "another").read(), IsEmpty());

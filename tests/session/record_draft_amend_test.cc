@@ -162,7 +162,6 @@ TEST(RecordDraftAmend, AWithdrawnRecordIsNone) {
   RecordDraft draft = draft_of(pit.session, "T3-3");
   EXPECT_FALSE(draft.amends);
   EXPECT_EQ(draft.note, "");
-  EXPECT_EQ(draft.based_on, "");
   draft.nothing_found = true;
   EXPECT_THAT(missing(draft, pit.session.model()), IsEmpty());
   pit.amend(draft);
@@ -213,6 +212,32 @@ TEST(RecordDraftAmend, AnOvertakenDraftIsNotSavedUnseen) {
   EXPECT_EQ(seen.depth_cm, "60");
   EXPECT_THAT(seen.counts, ElementsAre("2", ""));
   EXPECT_THAT(fields_of(said(seen, pit.session)), ElementsAre("depth_cm", "count 0"));  // what is shown is saved
+}
+
+TEST(RecordDraftAmend, ADraftIsOvertakenByAnEarlierHeadToo) {
+  TwoDevices both;
+  both.a.open().apply({dug("T3-3", 0)}).value();
+  both.b.minute = 5;
+  both.b.open().apply({dug("T3-3", 2)}).value();
+  RecordDraft draft = draft_of(both.b.open(), "T3-3");
+  draft.depth_cm = "50";
+  draft.why = "measured";
+  take_in(both.a.file, both.b.file);
+  const Session session = both.b.open();
+  EXPECT_EQ(action_of(draft, session.model(), "B").error().kind, ErrorKind::kConflict);
+  EXPECT_TRUE(catch_up(&draft, session.model()));
+  EXPECT_TRUE(said(draft, session).status);  // all that is shown
+}
+
+TEST(RecordDraftAmend, ADraftThatWasSavedBeforeACrashHoldsNothingNew) {
+  OneSurvey survey;
+  Session session = survey.device.open();
+  RecordDraft draft = draft_of(session, "T3-3");
+  draft.counts[0] = "3";
+  draft.note = "two layers";
+  session.apply({action_of(draft, session.model(), "A").value()}).value();
+  EXPECT_TRUE(catch_up(&draft, session.model()));
+  EXPECT_FALSE(typed_anything(draft, session.model()));
 }
 
 TEST(RecordDraftAmend, ANewDraftOvertakenByARecordAmendsIt) {
