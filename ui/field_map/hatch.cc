@@ -27,7 +27,7 @@ LineRange lines_in(double low, double high, double step) { return {std::ceil(low
 
 void add_crossings(const Point& from, const Point& to, std::size_t polygon, const LineRange& shown, double step,
                    std::vector<Crossing>* crossings) {
-  const auto [low, high] = std::minmax(across(from), across(to));
+  const auto [low, high] = std::minmax({across(from), across(to)});
   // One line more on each side: rounding must not decide which edges a corner's line meets, or crossings would not pair.
   const LineRange met = lines_in(low, high, step);
   for (double line = std::max(met.first - 1, shown.first); line <= std::min(met.last + 1, shown.last); ++line) {
