@@ -131,10 +131,10 @@ bool inside(const Box& box, const Point& at) {
   return at.x >= box.low.x && at.x <= box.high.x && at.y >= box.low.y && at.y <= box.high.y;
 }
 
-template <class CellType>
-bool cell_before(const CellType& a, const CellType& b) {
-  return std::tie(a.row, a.column) < std::tie(b.row, b.column);
-}
+constexpr auto kByCell = [](const auto& a, const auto& b) {
+  return a.row != b.row ? a.row < b.row : a.column < b.column;
+};
+constexpr auto kByColumn = [](const auto& a, const auto& b) { return a.column < b.column; };
 
 }  // namespace
 
@@ -162,7 +162,9 @@ PitMark mark_of(const SurveyModel& model, NodeId id) {
 MapMarks::MapMarks(const SurveyModel& model) : lattice_(model.survey().ground().frame.lattice()) {
   const Survey& survey = model.survey();
   mark_bits_.assign(static_cast<std::size_t>(survey.ground().frame.size()) / 64 + 1, 0);
-  for (const NodeId id : candidates(survey)) {
+  const std::vector<NodeId> nodes = candidates(survey);
+  marked_.reserve(nodes.size());
+  for (const NodeId id : nodes) {
     const PitMark pit = mark_of(model, id);
     if (!shows(pit)) continue;
     marked_.push_back(pit);
@@ -180,9 +182,10 @@ MapMarks::MapMarks(const SurveyModel& model) : lattice_(model.survey().ground().
     free_labels_.push_back(label);
   }
   Level base;
+  base.reserve(marked_.size());
   for (std::uint32_t i = 0; i < marked_.size(); ++i)
     base.push_back(cell_of(marked_[i], i));
-  std::sort(base.begin(), base.end(), cell_before<Cell>);
+  std::sort(base.begin(), base.end(), kByCell);
   levels_.push_back(std::move(base));
   while (!coarsest(levels_.back()))
     levels_.push_back(coarser(levels_.back()));
@@ -204,16 +207,26 @@ MapMarks::Cell MapMarks::cell_of(const PitMark& mark, std::uint32_t index) const
   return {cell_row(lattice_, at.v), cell_column(lattice_, at.u), index};
 }
 
+// Two rows of cells become one at a time, each of them in order already.
 MapMarks::Level MapMarks::coarser(const Level& level) const {
-  Level out;
-  for (const Cell& cell : level)
-    out.push_back({cell.row >> 1, cell.column >> 1, cell.mark});
-  std::sort(out.begin(), out.end(), [&](const Cell& a, const Cell& b) {
-    if (cell_before(a, b) || cell_before(b, a)) return cell_before(a, b);
-    return more_telling(marked_[a.mark], marked_[b.mark]);
-  });
-  const auto same = [](const Cell& a, const Cell& b) { return a.row == b.row && a.column == b.column; };
-  out.erase(std::unique(out.begin(), out.end(), same), out.end());
+  constexpr std::int32_t kFirst = std::numeric_limits<std::int32_t>::min();
+  Level out, both;
+  for (auto lower = level.begin(); lower != level.end();) {
+    const std::int32_t row = lower->row >> 1;
+    const auto upper = std::lower_bound(lower, level.end(), Cell{2 * row + 1, kFirst, 0}, kByCell);
+    const auto end = std::lower_bound(upper, level.end(), Cell{2 * row + 2, kFirst, 0}, kByCell);
+    both.resize(static_cast<std::size_t>(end - lower));
+    std::merge(lower, upper, upper, end, both.begin(), kByColumn);
+    for (const Cell& fine : both) {
+      const Cell cell{row, fine.column >> 1, fine.mark};
+      if (out.empty() || out.back().row != cell.row || out.back().column != cell.column) {
+        out.push_back(cell);
+      } else if (more_telling(marked_[cell.mark], marked_[out.back().mark])) {
+        out.back() = cell;
+      }
+    }
+    lower = end;
+  }
   return out;
 }
 
@@ -236,7 +249,7 @@ void MapMarks::visible(const Box& ground, double apart_m, std::vector<PitMark>* 
   const std::int32_t last_column = cell_column(lattice_, shown.high.u) >> shift;
   auto at = level.begin();
   for (std::int32_t row = cell_row(lattice_, shown.low.v) >> shift; row <= last_row;) {
-    at = std::lower_bound(at, level.end(), Cell{row, first_column, 0}, cell_before<Cell>);
+    at = std::lower_bound(at, level.end(), Cell{row, first_column, 0}, kByCell);
     for (; at != level.end() && at->row == row && at->column <= last_column; ++at) {
       if (inside(ground, marked_[at->mark].place)) out->push_back(marked_[at->mark]);
     }
