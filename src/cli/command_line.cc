@@ -21,6 +21,10 @@ std::string no_command(const CLI::App& program) {
          "; legal: " + join(commands, ", ");
 }
 
+std::string survey_file_name(const std::string& text) {
+  return text.ends_with(".gpkg") ? std::string() : in_quotes(text) + " doesn't end in .gpkg";
+}
+
 // One line, and exit 2: wrong usage. Asking for help or the version is none.
 int usage_error(const CLI::App& program, const CLI::ParseError& error) {
   if (error.get_exit_code() == static_cast<int>(CLI::ExitCodes::Success)) return program.exit(error);
@@ -37,9 +41,7 @@ int usage_error(const CLI::App& program, const CLI::ParseError& error) {
 }  // namespace
 
 Command& Command::survey_file(std::string* value) {
-  app_->add_option("FILE", *value, "the survey file (.gpkg)")->required()->check([](const std::string& text) {
-    return text.ends_with(".gpkg") ? std::string() : in_quotes(text) + " doesn't end in .gpkg";
-  });
+  app_->add_option("FILE", *value, "the survey file (.gpkg)")->required()->check(survey_file_name);
   return *this;
 }
 
@@ -74,6 +76,12 @@ CommandLine::~CommandLine() = default;
 
 Command CommandLine::command(const std::string& name, const std::string& help) {
   return {this, app_->add_subcommand(name, help)};
+}
+
+void CommandLine::without_command(const std::string& help, std::function<int(const std::string& file)> work) {
+  app_->require_subcommand(0, 1);
+  app_->add_option("FILE", file_, help)->check(survey_file_name);
+  work_ = [this, work = std::move(work)] { return work(file_); };
 }
 
 int CommandLine::parse_and_run(int argc, const char* const* argv) {

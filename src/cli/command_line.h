@@ -45,6 +45,8 @@ class CommandLine {
   ~CommandLine();
 
   Command command(const std::string& name, const std::string& help);
+  // What is done when no command is given, with a survey file or "" for none.
+  void without_command(const std::string& help, std::function<int(const std::string& file)> work);
   // Reads the arguments and runs the command they name. Wrong usage: one line on standard error, exit code 2.
   int parse_and_run(int argc, const char* const* argv);
 
@@ -52,6 +54,7 @@ class CommandLine {
   friend class Command;
   std::unique_ptr<CLI::App> app_;
   std::function<int()> work_;
+  std::string file_;
 };
 
 }  // namespace nearpit::cli

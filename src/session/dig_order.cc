@@ -28,26 +28,9 @@ std::vector<std::int32_t> first_sample_rows(const SurveyGround& ground) {
 struct LastPit {
   std::int64_t dug_ms = INT64_MIN;
   std::int64_t clock = INT64_MIN;
+  std::string label;
   Point place;
 };
-
-// The latest pit dug by the crew, by the time dug, then by the log's clock.
-std::optional<Point> last_place(const SurveyModel& model, const std::string& crew) {
-  std::optional<LastPit> last;
-  const auto look_at = [&](const PitEntry& entry, const Point& node_place) {
-    const PitRecord& record = entry.record();
-    if (record.status != PitStatus::kDug || (!crew.empty() && record.crew != crew)) return;
-    const auto when = parse_time(record.dug_at, model.zone());
-    const LastPit here{when ? when->time.utc_ms : INT64_MIN, entry.heads[entry.verdict.counts].clock,
-                       record.place.value_or(node_place)};
-    if (!last || std::tie(here.dug_ms, here.clock) > std::tie(last->dug_ms, last->clock)) last = here;
-  };
-  for (const auto& [id, entry] : model.survey().pits())
-    look_at(entry, model.survey().ground().frame.ground(id));
-  for (const auto& [label, entry] : model.survey().off_grid_pits())
-    look_at(entry, {});
-  return last ? std::optional<Point>(last->place) : std::nullopt;
-}
 
 std::vector<NodeId> walked(const SurveyModel& model, const std::vector<NodeId>& due, const Point& start) {
   const Frame& frame = model.survey().ground().frame;
@@ -69,7 +52,47 @@ std::vector<NodeId> walked(const SurveyModel& model, const std::vector<NodeId>& 
   return sorted;
 }
 
+// Stops of the list that the crew means to do now.
+std::vector<NodeId> wanted(const DigOrder& order, bool first_sample_first) {
+  const bool only_first = first_sample_first && order.first_sample_left > 0;
+  std::vector<NodeId> stops;
+  for (const DigStop& stop : order.due) {
+    if (stop.first_sample || !only_first) stops.push_back(stop.node);
+  }
+  return stops;
+}
+
 }  // namespace
+
+std::optional<LastDug> last_dug(const SurveyModel& model, const std::string& crew) {
+  std::optional<LastPit> last;
+  const auto look_at = [&](const PitEntry& entry, const Point& node_place, const auto& label) {
+    const PitRecord& record = entry.record();
+    if (record.status != PitStatus::kDug || (!crew.empty() && record.crew != crew)) return;
+    const auto when = parse_time(record.dug_at, model.zone());
+    const std::int64_t dug_ms = when ? when->time.utc_ms : INT64_MIN;
+    const std::int64_t clock = entry.heads[entry.verdict.counts].clock;
+    if (last && std::tie(dug_ms, clock) <= std::tie(last->dug_ms, last->clock)) return;
+    last = {dug_ms, clock, label(), record.place.value_or(node_place)};
+  };
+  for (const auto& [id, entry] : model.survey().pits())
+    look_at(entry, model.survey().ground().frame.ground(id), [&, node = id] { return model.label(node); });
+  for (const auto& [label, entry] : model.survey().off_grid_pits())
+    look_at(entry, {}, [&, name = label] { return name; });
+  return last ? std::optional<LastDug>({last->label, last->place}) : std::nullopt;
+}
+
+NodeId next_stop(const SurveyModel& model, const DigOrder& order, NodeId after, bool first_sample_first) {
+  std::vector<NodeId> stops = wanted(order, first_sample_first);
+  if (stops.empty()) return kNoNode;
+  // In the nearest order the list begins where the crew stands.
+  if (after == kNoNode || model.plan().nearest_order) return stops.front();
+  if (std::find(stops.begin(), stops.end(), after) == stops.end()) stops.push_back(after);
+  const Point place = model.survey().ground().frame.ground(after);
+  const std::vector<NodeId> line = walked(model, stops, place);
+  const auto here = std::find(line.begin(), line.end(), after);
+  return here + 1 == line.end() ? line.front() : *(here + 1);
+}
 
 DigOrder dig_order(const SurveyModel& model, const std::string& crew, const std::optional<Point>& from) {
   const Survey& survey = model.survey();
@@ -78,8 +101,8 @@ DigOrder dig_order(const SurveyModel& model, const std::string& crew, const std:
   Point at = ground.frame.lattice().origin;
   if (from) {
     at = *from;
-  } else if (const auto last = last_place(model, crew)) {
-    at = *last;
+  } else if (const auto last = last_dug(model, crew)) {
+    at = last->place;
   }
   DigOrder order;
   for (const NodeId id : walked(model, list.due(), at)) {

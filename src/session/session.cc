@@ -3,6 +3,7 @@
 #include <utility>
 
 #include "base/text.h"
+#include "record/record_json.h"
 #include "session/blank_fields.h"
 #include "session/judge_batch.h"
 #include "session/layer_content.h"
@@ -81,6 +82,7 @@ Status Session::catch_up() {
   NEARPIT_TRY(file_.each_revision(last_rowid_, [&](std::int64_t rowid, Revision&& revision) {
     log_.add(revision);
     last_rowid_ = rowid;
+    last_written_ = revision.at;
     return ok_status();
   }));
   std::vector<NodeId> changed;
@@ -120,8 +122,10 @@ Result<Applied> Session::apply(const std::vector<Action>& actions) {
   // The records are on the disk: nothing from here on may say otherwise.
   const Status kept = environment_->memory.remember(survey_id_, {writer.row.id, maker.last_hash(), maker.last_hash()});
   if (!kept) applied.notes.push_back(unremembered(kept.error()));
-  for (const Revision& revision : batch.revisions())
+  for (const Revision& revision : batch.revisions()) {
     log_.add(revision);
+    last_written_ = revision.at;
+  }
   log_.take_changed();  // the model holds them already
   for (const std::string& caution : batch.cautions())
     applied.notes.push_back(caution);
@@ -158,6 +162,16 @@ Result<Figures> Session::figures_of_day(const std::string& day) {
   std::vector<NodeId> changed;
   NEARPIT_TRY(take_objects(file_.path(), log, *then, &changed));
   return day_figures(then->survey(), figure_settings());
+}
+
+Result<std::vector<Session::PastRecord>> Session::history(const PitName& pit) {
+  std::vector<PastRecord> past;
+  NEARPIT_TRY(file_.each_revision_of(pit.object, [&](std::int64_t, Revision&& revision) -> Status {
+    NEARPIT_ASSIGN(record, pit_record_of(revision.body, model_->plan().finds));
+    past.push_back({in_zone(revision.at, model_->zone()), revision.by, revision.why, std::move(record)});
+    return ok_status();
+  }));
+  return past;
 }
 
 CheckReport Session::check() {

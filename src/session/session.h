@@ -43,6 +43,14 @@ class Session {
   // All records, or only revisions whose wall time lies not later than the day (2026-05-04, in the plan's zone).
   const Figures& figures();
   Result<Figures> figures_of_day(const std::string& day);
+  // What was written of a pit, oldest first; withdrawn records too. Errors: the file can't be read.
+  struct PastRecord {
+    WallTime at;
+    std::string by;
+    std::string why;
+    PitRecord record;
+  };
+  Result<std::vector<PastRecord>> history(const PitName& pit);
   // Everything that check_survey says of this file.
   CheckReport check();
 
@@ -50,6 +58,9 @@ class Session {
   const SurveyFile& file() const { return file_; }
   // How many revisions the log holds; figures and lists are of this revision.
   std::int64_t revision() const { return log_.revisions(); }
+  const std::string& survey_id() const { return survey_id_; }
+  // Wall time of the last revision in the file, by order of writing; nothing while there is none.
+  const std::optional<WallTime>& last_written() const { return last_written_; }
 
  private:
   Session(SurveyFile file, Environment& environment, std::unique_ptr<SurveyModel> model)
@@ -64,6 +75,7 @@ class Session {
   std::unique_ptr<SurveyModel> model_;
   LogFold log_;
   std::int64_t last_rowid_ = 0;
+  std::optional<WallTime> last_written_;
   std::string survey_id_;
   std::optional<Figures> figures_;
   std::int64_t figures_revision_ = -1;

@@ -17,6 +17,9 @@ Status insert_revision(Connection& db, const Revision& revision);
 // `which` is the rest of the statement, with ?1 for `value`: "WHERE number > ?1 ORDER BY number". Stops at the first error of `take`.
 Status each_revision(Connection& db, const std::string& which, std::int64_t value,
                      const std::function<Status(std::int64_t rowid, Revision&&)>& take);
+// Those of one object, in order of rowid.
+Status each_revision_of(Connection& db, const std::string& object,
+                        const std::function<Status(std::int64_t rowid, Revision&&)>& take);
 
 }  // namespace nearpit::store
 

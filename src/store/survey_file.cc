@@ -148,6 +148,11 @@ Status SurveyFile::each_revision(std::int64_t after,
   return store::each_revision(handle_->db, "WHERE number > ?1 ORDER BY number", after, take);
 }
 
+Status SurveyFile::each_revision_of(const std::string& object,
+                                    const std::function<Status(std::int64_t rowid, Revision&&)>& take) {
+  return store::each_revision_of(handle_->db, object, take);
+}
+
 Result<std::int64_t> SurveyFile::last_rowid() {
   Statement last(handle_->db, "SELECT coalesce(max(number), 0) FROM nearpit_revision");
   NEARPIT_ASSIGN(row, last.next());

@@ -60,6 +60,8 @@ class SurveyFile {
 
   // All revisions in the order in which this file took them (rowid). From rowid `after` on; 0 for all.
   Status each_revision(std::int64_t after, const std::function<Status(std::int64_t rowid, Revision&&)>& take);
+  // Those of one object. Cost: the file.
+  Status each_revision_of(const std::string& object, const std::function<Status(std::int64_t rowid, Revision&&)>& take);
   Result<std::int64_t> last_rowid();
   Result<std::optional<WriterRow>> writer(const std::string& id);
 

@@ -11,8 +11,17 @@
 #include "cli/new_command.h"
 #include "cli/next_command.h"
 #include "cli/tally_command.h"
+#include "session/environment.h"
+#include "window/app_window.h"
 
 namespace {
+
+int open_window(const std::string& file) {
+  auto environment = nearpit::real_environment();
+  if (!environment) return nearpit::cli::fail(environment.error());
+  const nearpit::Status shown = nearpit::ui::run_window(*environment, file);
+  return shown ? nearpit::cli::kDone : nearpit::cli::fail(shown.error());
+}
 
 int run_program(int argc, char** argv) {
   nearpit::cli::CommandLine line("Nearpit: shovel test pits on a grid - which pit is next, and what may be claimed",
@@ -23,6 +32,7 @@ int run_program(int argc, char** argv) {
   nearpit::cli::add_act(line);
   nearpit::cli::add_tally(line);
   nearpit::cli::add_check(line);
+  line.without_command("the survey to open in the window (.gpkg)", open_window);
   return line.parse_and_run(argc, argv);
 }
 

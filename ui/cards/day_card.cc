@@ -1,0 +1,228 @@
+#include "cards/day_card.h"
+
+#include <algorithm>
+#include <set>
+#include <string>
+#include <vector>
+
+#include "base/numbers.h"
+#include "base/text.h"
+#include "desk/words.h"
+#include "widgets/paged_list.h"
+
+namespace nearpit::ui {
+namespace {
+
+constexpr int kDigits = 2;
+constexpr double kBar_mm = 5;
+
+std::string figure(double value) { return format_significant(value, kDigits); }
+
+// Writes text down a column.
+struct Column {
+  Ui& ui;
+  PixelBox left;
+
+  void put(const std::string& text, TextSize size = TextSize::kBase, Tone tone = Tone::kPlain) {
+    const float height = ui.text_height(text, left.width(), size);
+    ui.text(cut_top(&left, height), text, {.size = size, .tone = tone, .lines = 60, .shorten = true, .top = true});
+  }
+  void gap(double mm) { left.top += ui.mm(mm); }
+};
+
+void progress_sentences(Column& column, const Progress& progress) {
+  std::string text = std::to_string(progress.first_sample_dug) + " of " +
+                     counted(progress.first_sample, "grid pit is", "grid pits are") + " recorded. " +
+                     counted(progress.dug, "pit", "pits") + " dug, " + std::to_string(progress.positive) +
+                     " positive; " + std::to_string(progress.not_dug) + " not dug.";
+  if (progress.judgement > 0) {
+    text += " " + counted(progress.judgement, "judgement pit stands", "judgement pits stand") +
+            " apart and in no figure below.";
+  }
+  column.put(text);
+  column.gap(1);
+  std::string open = counted(progress.due, "pit is", "pits are") + " still to dig";
+  if (progress.halted > 0) open += ", " + counted(progress.halted, "is", "are") + " halted";
+  if (progress.conflicts > 0)
+    open += "; " + counted(progress.conflicts, "pit has", "pits have") + " records that disagree";
+  column.put(progress.complete ? "The plan's digging is done." : open + ".");
+}
+
+// Why rows are not final, each reason once.
+void open_reasons(Column& column, const Figures& figures) {
+  std::vector<std::string> reasons;
+  std::set<std::string> seen;
+  bool final = true;
+  for (const Estimate& estimate : figures.estimates) {
+    final = final && estimate.status == FigureStatus::kFinal;
+    for (const std::string& why : estimate.why) {
+      if (seen.insert(why).second) reasons.push_back(why);
+    }
+  }
+  if (final && reasons.empty()) {
+    column.put("The figures are final for this plan.");
+    return;
+  }
+  column.put(final ? "About the figures:" : "The figures are not final:");
+  for (const std::string& reason : reasons)
+    column.put("\xC2\xB7 " + reason, TextSize::kSmall);
+}
+
+// The three ways of a figure, in a crew's words.
+std::string way(Estimator estimator) {
+  switch (estimator) {
+    case Estimator::kHansenHurwitz:
+      return "clusters by their average";
+    case Estimator::kHorvitzThompson:
+      return "clusters by their chance of being met";
+    case Estimator::kFirstSampleOnly:
+      return "grid pits alone";
+  }
+  return "";
+}
+
+struct Shown {
+  double value = 0;
+  std::optional<LikelyRange> range;
+};
+
+// Positive pits are shown as how many of the grid's, finds as how many a pit.
+Shown shown(const Estimate& estimate, double pits) {
+  const double factor = estimate.per_m2 ? 1 : pits;
+  Shown out{estimate.mean_per_pit * factor, estimate.range};
+  if (out.range) out.range->lower *= factor, out.range->upper *= factor;
+  return out;
+}
+
+std::string sentence(const Estimate& estimate, double pits) {
+  const Shown figures = shown(estimate, pits);
+  const std::string unit = estimate.per_m2 ? " a pit" : " of " + format_fixed(pits, 0) + " pits";
+  std::string text = "about " + figure(figures.value) + unit;
+  if (figures.range)
+    text += ", likely " + figure(figures.range->lower) + " to " + figure(figures.range->upper);
+  else
+    text += "; no range can be given yet";
+  if (estimate.per_m2) {
+    text += ". That is " + figure(*estimate.per_m2) + " per m\xC2\xB2, about " + figure(estimate.total) +
+            " on the whole ground";
+    if (estimate.ground.range) {
+      const double area = estimate.total / std::max(*estimate.per_m2, 1e-300);
+      if (*estimate.per_m2 > 0) {
+        text += " (likely " + figure(estimate.ground.range->lower * area) + " to " +
+                figure(estimate.ground.range->upper * area) + ")";
+      }
+    }
+  }
+  return text + (estimate.status == FigureStatus::kFinal ? "." : ". Not final.");
+}
+
+// The likely range as a bar with ends, the figure as a square on it.
+void bar(Ui& ui, const PixelBox& box, const Shown& figures, double most) {
+  const auto at = [&](double value) {
+    return box.left + static_cast<float>(std::clamp(value / most, 0.0, 1.0)) * box.width();
+  };
+  const float middle = (box.top + box.bottom) / 2;
+  const float thin = std::max(1.0F, ui.mm(0.3));
+  ui.line({box.left, middle}, {box.right, middle}, ui.theme().hatch, thin);
+  if (figures.range) {
+    const float half = ui.mm(1.2);
+    const PixelBox range{at(figures.range->lower), middle - half, at(figures.range->upper), middle + half};
+    ui.fill(range, ui.theme().primary.fill);
+    ui.line({range.left, box.top}, {range.left, box.bottom}, ui.theme().line, thin * 2);
+    ui.line({range.right, box.top}, {range.right, box.bottom}, ui.theme().line, thin * 2);
+  }
+  const float dot = ui.mm(1.4);
+  const PixelBox square{at(figures.value) - dot, middle - dot, at(figures.value) + dot, middle + dot};
+  ui.fill(square, ui.theme().chosen.fill);
+  ui.outline(square, ui.theme().line, thin * 2);
+}
+
+void figures_of(Column& column, const std::vector<const Estimate*>& rows, double pits, const std::string& name) {
+  Ui& ui = column.ui;
+  column.gap(3);
+  column.put(name);
+  double most = 0;
+  for (const Estimate* row : rows) {
+    const Shown figures = shown(*row, pits);
+    most = std::max({most, figures.value, figures.range ? figures.range->upper : 0});
+  }
+  for (const Estimate* row : rows) {
+    column.gap(1.5);
+    column.put(way(row->estimator) + ": " + sentence(*row, pits), TextSize::kSmall);
+    PixelBox line = cut_top(&column.left, ui.mm(kBar_mm));
+    line.left += ui.mm(2);
+    line.right -= ui.mm(2);
+    if (most > 0) bar(ui, line, shown(*row, pits), most);
+  }
+  if (most > 0) {
+    PixelBox scale = cut_top(&column.left, ui.mm(line_mm(TextSize::kSmall)));
+    ui.text(scale, "0", {.size = TextSize::kSmall, .tone = Tone::kQuiet});
+    ui.text(scale, figure(most) + (rows.front()->per_m2 ? " a pit" : " pits"),
+            {.size = TextSize::kSmall, .align = Align::kRight, .tone = Tone::kQuiet});
+  }
+}
+
+std::string title_of(const Estimate& estimate, const SurveyModel& model) {
+  if (estimate.of != "target") return estimate.of;
+  std::vector<std::string> finds;
+  for (const std::size_t find : model.plan().positive.finds)
+    finds.push_back(model.plan().finds[find]);
+  return "what makes a pit positive: " + list_in_words(finds);
+}
+
+void missed(Column& column, const Figures& figures, double confidence) {
+  if (!figures.missed_cluster_pits) return;
+  column.gap(3);
+  column.put("A cluster of up to " + counted(*figures.missed_cluster_pits, "pit", "pits") +
+             " could have been missed by the grid pits (chance 1 in " + format_trimmed(1 / (1 - confidence), 0) +
+             " or more), even if each of its pits would prove positive.");
+}
+
+void method(Column& column, double confidence) {
+  column.gap(3);
+  column.put(
+      "How: clusters by their average is the Hansen-Hurwitz estimate, by their chance of being met the "
+      "Horvitz-Thompson "
+      "estimate, of adaptive cluster sampling (Thompson 1990). Likely ranges are t ranges at " +
+          format_trimmed(confidence * 100, 1) +
+          " %, for pits like these on this grid. They say nothing of ground that was not sampled, and never that "
+          "ground is empty.",
+      TextSize::kSmall, Tone::kQuiet);
+}
+
+}  // namespace
+
+void day_card(Ui& ui, const PixelBox& box, const SurveyView& survey, DayCardState& state) {
+  const Ui::Part part = ui.part("day");
+  if (!survey.figures) return;
+  const Figures& figures = *survey.figures;
+  const SurveyModel& model = *survey.model;
+  const double pits = model.survey().ground().frame.size();
+  paged_text(ui, "text", box, &state.scroll, [&](const PixelBox& start) {
+    Column column{ui, start};
+    progress_sentences(column, figures.progress);
+    column.gap(2);
+    open_reasons(column, figures);
+    column.gap(1);
+    std::size_t closed = 0;
+    for (const Cluster& cluster : figures.clusters)
+      closed += cluster.closed() ? 1u : 0u;
+    column.put(figures.clusters.empty() ? "No cluster was met."
+                                        : counted(figures.clusters.size(), "cluster", "clusters") + " met, " +
+                                              std::to_string(closed) + " of them dug out.");
+    std::vector<const Estimate*> rows;
+    for (const Estimate& estimate : figures.estimates) {
+      if (!rows.empty() && rows.front()->of != estimate.of) {
+        figures_of(column, rows, pits, title_of(*rows.front(), model));
+        rows.clear();
+      }
+      rows.push_back(&estimate);
+    }
+    if (!rows.empty()) figures_of(column, rows, pits, title_of(*rows.front(), model));
+    missed(column, figures, model.plan().confidence);
+    method(column, model.plan().confidence);
+    return column.left.top;
+  });
+}
+
+}  // namespace nearpit::ui

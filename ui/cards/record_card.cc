@@ -1,0 +1,262 @@
+#include "cards/record_card.h"
+
+#include <algorithm>
+#include <array>
+
+#include "base/text.h"
+#include "cards/record_panels.h"
+#include "desk/words.h"
+#include "widgets/key_pads.h"
+#include "widgets/paged_list.h"
+
+namespace nearpit::ui {
+namespace {
+
+constexpr std::size_t kMostDigits = 6;
+constexpr std::size_t kMostDepthDigits = 5;
+constexpr double kPad_mm = 3 * kTarget_mm + 2 * kGap_mm;
+constexpr double kPadHeight_mm = 4 * kTarget_mm + 3 * kGap_mm;
+
+// A draft being changed while the card is drawn; sent when it differs.
+struct Editing {
+  const SurveyView& survey;
+  RecordCardState& state;
+  RecordDraft draft;
+
+  std::size_t finds() const { return draft.counts.size(); }
+  bool on_depth() const { return state.field >= finds(); }
+  std::string& typed() { return on_depth() ? draft.depth_cm : draft.counts[state.field]; }
+
+  void choose(std::size_t field) {
+    state.field = field;
+    state.fresh = true;
+  }
+  // A count above nothing takes 'nothing found' back.
+  void counted() {
+    if (on_depth()) return;
+    const std::string& count = draft.counts[state.field];
+    if (!count.empty() && count != "0") draft.nothing_found = false;
+  }
+  void strike(char key) {
+    if (key == '\b') {
+      if (!typed().empty()) typed().pop_back();
+      state.fresh = false;
+      return;
+    }
+    if (key == '.' && !on_depth()) return;
+    if (state.fresh) typed().clear();
+    state.fresh = false;
+    type_digit(&typed(), key, on_depth() ? kMostDepthDigits : kMostDigits);
+    counted();
+  }
+  void step(std::size_t field, int by) {
+    choose(field);
+    step_count(&typed(), by);
+    counted();
+  }
+  void nothing_found() {
+    draft.nothing_found = !draft.nothing_found;
+    if (draft.nothing_found) std::fill(draft.counts.begin(), draft.counts.end(), "");
+  }
+};
+
+bool required(const SurveyView& survey, const std::string& field) {
+  return std::find(survey.blanks.begin(), survey.blanks.end(), field) != survey.blanks.end();
+}
+
+void find_row(Ui& ui, PixelBox box, Editing& edit, std::size_t find) {
+  const std::string& name = edit.survey.model->plan().finds[find];
+  const Ui::Part part = ui.part("find-" + std::to_string(find));
+  const float side = ui.mm(kTarget_mm);
+  if (ui.button("less", cut_left(&box, side, ui.mm(kGap_mm)), "\xE2\x88\x92", {.size = TextSize::kLarge}))
+    edit.step(find, -1);
+  if (ui.button("more", cut_right(&box, side, ui.mm(kGap_mm)), "+", {.size = TextSize::kLarge})) edit.step(find, 1);
+  const bool chosen = edit.state.field == find;
+  if (ui.row("count", box, name, chosen)) edit.choose(find);
+  const std::string& count = edit.draft.counts[find];
+  PixelBox inside = box.inset(ui.mm(1));
+  const std::string shown = count.empty() ? (edit.draft.nothing_found ? "0" : "\xE2\x80\x93") : count;
+  const Tone tone = chosen ? Tone::kOnChosen : Tone::kOnKey;
+  const float width = std::min(inside.width() * 0.6F, std::max(ui.mm(8), ui.text_width(shown, TextSize::kLarge) + 1));
+  const Ui::Part inner = ui.part("count");
+  ui.text(cut_right(&inside, width, ui.mm(1)), shown, {.size = TextSize::kLarge, .align = Align::kRight, .tone = tone});
+  ui.text(inside, name, {.tone = tone, .lines = 2, .shorten = true});
+}
+
+void depth_row(Ui& ui, const PixelBox& box, Editing& edit) {
+  const bool chosen = edit.on_depth();
+  const bool wanted = required(edit.survey, "depth_cm");
+  if (ui.row("depth", box, "Depth", chosen)) edit.choose(edit.finds());
+  PixelBox inside = box.inset(ui.mm(1));
+  const Tone tone = chosen ? Tone::kOnChosen : Tone::kOnKey;
+  const Ui::Part inner = ui.part("depth");
+  const std::string shown = edit.draft.depth_cm.empty() ? "\xE2\x80\x93" : edit.draft.depth_cm + " cm";
+  ui.text(cut_right(&inside, inside.width() * 0.6F), shown,
+          {.size = TextSize::kLarge, .align = Align::kRight, .tone = tone});
+  ui.text(inside, wanted ? "Depth (asked for)" : "Depth", {.tone = tone, .lines = 2});
+}
+
+// Label at the left, what was said at the right; touching it opens something.
+bool said_row(Ui& ui, const std::string& name, const PixelBox& box, const std::string& label, const std::string& said,
+              bool wanted) {
+  const bool touched = ui.row(name, box, label, false);
+  PixelBox inside = box.inset(ui.mm(1));
+  const Ui::Part inner = ui.part(name);
+  ui.text(cut_left(&inside, inside.width() * 0.34F, ui.mm(1)), wanted ? label + " (asked for)" : label,
+          {.size = TextSize::kSmall, .tone = Tone::kOnKey, .lines = 2});
+  ui.text(inside, said.empty() ? "\xE2\x80\x93" : said,
+          {.align = Align::kRight, .tone = Tone::kOnKey, .lines = 2, .shorten = true});
+  return touched;
+}
+
+void open_note(TypingState& typing, const RecordDraft& draft) {
+  begin_typing(&typing, TypingFor::kNote, "Note on " + draft.pit, draft.note, {}, 4000);
+}
+
+void open_why(TypingState& typing, const RecordDraft& draft) {
+  begin_typing(&typing, TypingFor::kWhyChanged, "Why the record of " + draft.pit + " is changed", draft.why,
+               {"miscounted", "typed wrong", "seen again in the lab"}, 2000);
+}
+
+float main_rows(Ui& ui, PixelBox box, Editing& edit, TypingState& typing) {
+  RecordDraft& draft = edit.draft;
+  const float height = ui.mm(kTarget_mm);
+  const float gap = ui.mm(kGap_mm);
+  if (draft.amends && said_row(ui, "why", cut_top(&box, height, gap), "Why changed", draft.why, false))
+    open_why(typing, draft);
+  if (draft.not_dug) {
+    if (said_row(ui, "reason", cut_top(&box, height, gap), "Not dug", draft.reason ? in_words(*draft.reason) : "",
+                 false))
+      edit.state.panel = RecordPanel::kNotDug;
+  } else {
+    for (std::size_t find = 0; find < edit.finds(); ++find)
+      find_row(ui, cut_top(&box, height, gap), edit, find);
+    depth_row(ui, cut_top(&box, height, gap), edit);
+    if (said_row(ui, "stop", cut_top(&box, height, gap), "Stopped at", draft.stop ? in_words(*draft.stop) : "",
+                 required(edit.survey, "stop"))) {
+      edit.state.panel = RecordPanel::kStop;
+    }
+  }
+  if (said_row(ui, "note", cut_top(&box, height, gap), "Note", draft.note, required(edit.survey, "note")))
+    open_note(typing, draft);
+  return box.top - gap;
+}
+
+// What stands between the draft and a saved record, or what will be blank.
+std::string hint(const SurveyView& survey) {
+  if (!survey.missing.empty()) return "Still to say: " + join(survey.missing, "; ");
+  if (!survey.blanks.empty()) {
+    std::string blank = join(survey.blanks, ", ");
+    std::replace(blank.begin(), blank.end(), '_', ' ');
+    return "The plan also asks for " + blank;
+  }
+  return "";
+}
+
+void main_panel(Ui& ui, PixelBox box, Editing& edit, TypingState& typing, Sink& sink) {
+  const SurveyView& survey = edit.survey;
+  RecordDraft& draft = edit.draft;
+  PixelBox foot = cut_bottom(&box, ui.mm(kPrimary_mm), ui.mm(kGap_mm));
+  const float third = ui.mm(30);
+  if (ui.button("nothing-found", cut_left(&foot, third, ui.mm(kGap_mm)), "Nothing found",
+                {.chosen = draft.nothing_found && !draft.not_dug, .least_mm = kPrimary_mm}) ||
+      (!draft.not_dug && ui.take(U'n'))) {
+    draft.not_dug = false;
+    draft.reason.reset();
+    edit.nothing_found();
+  }
+  if (ui.button("not-dug", cut_left(&foot, third, ui.mm(kGap_mm)), "Not dug",
+                {.chosen = draft.not_dug, .least_mm = kPrimary_mm}) ||
+      ui.take(U'x')) {
+    edit.state.panel = RecordPanel::kNotDug;
+  }
+  const std::string missing = survey.missing.empty() ? "" : "still to say: " + survey.missing.front();
+  if (ui.button("save", foot, draft.amends ? "Save the change" : "Save",
+                {.kind = survey.missing.empty() ? ButtonKind::kPrimary : ButtonKind::kPlain,
+                 .least_mm = kPrimary_mm,
+                 .size = TextSize::kLarge,
+                 .under = missing,
+                 .shorten = true}) ||
+      ui.take(Key::kEnter)) {
+    sink.send(KeepDraft{draft});
+    sink.send(SaveRecord{});
+  }
+  PixelBox right = cut_right(&box, ui.mm(kPad_mm), ui.mm(kGap_mm));
+  if (!draft.not_dug) {
+    const PixelBox pad = cut_bottom(&right, ui.mm(kPadHeight_mm), ui.mm(1));
+    const std::string field = edit.on_depth() ? "Depth, cm" : survey.model->plan().finds[edit.state.field];
+    ui.text(right, survey.missing.empty() && !survey.blanks.empty() ? hint(survey) : field,
+            {.size = TextSize::kSmall, .align = Align::kCentre, .tone = Tone::kQuiet, .lines = 3, .shorten = true});
+    if (const auto key = number_pad(ui, pad)) edit.strike(*key);
+    if (ui.take(U'+') && !edit.on_depth()) edit.step(edit.state.field, 1);
+    if (ui.take(U'-') && !edit.on_depth()) edit.step(edit.state.field, -1);
+    if (!ui.ring_shown() && ui.take(Key::kDown)) edit.choose((edit.state.field + 1) % (edit.finds() + 1));
+    if (!ui.ring_shown() && ui.take(Key::kUp)) edit.choose((edit.state.field + edit.finds()) % (edit.finds() + 1));
+  }
+  const PixelBox rows = ui.begin_scroll("rows", box, &edit.state.scroll);
+  ui.end_scroll(main_rows(ui, rows, edit, typing));
+}
+
+// The row at the top: back, the pit, what it is, more.
+void head(Ui& ui, PixelBox box, Editing& edit, TypingState& typing, Sink& sink) {
+  RecordCardState& state = edit.state;
+  const bool main = state.panel == RecordPanel::kMain;
+  if (ui.button("back", cut_left(&box, ui.mm(20), ui.mm(kGap_mm)), main ? "To the list" : "Back",
+                {.size = TextSize::kSmall}) ||
+      ui.take(Key::kEscape)) {
+    if (main) {
+      sink.send(ShowCard{CardKind::kDigList});
+    } else {
+      state.panel = RecordPanel::kMain;
+    }
+  }
+  if (main) {
+    if (ui.button("more", cut_right(&box, ui.mm(18), ui.mm(kGap_mm)), "More", {})) state.panel = RecordPanel::kMore;
+    if (ui.take(U's')) state.panel = RecordPanel::kStop;
+    if (ui.take(U't')) open_note(typing, edit.draft);
+  }
+  PixelBox lines = box;
+  ui.text(cut_top(&lines, box.height() * 0.62F), edit.draft.pit, {.size = TextSize::kLarge, .shorten = true});
+  std::string what = edit.survey.recorded_pit ? edit.survey.recorded_pit->state : "";
+  if (edit.draft.judgement) what = "judgement pit";
+  if (edit.draft.amends) what = "recorded: " + what;
+  ui.text(lines, what, {.size = TextSize::kSmall, .tone = Tone::kQuiet, .shorten = true});
+}
+
+}  // namespace
+
+void record_card(Ui& ui, const PixelBox& box, const SurveyView& survey, RecordCardState& state, TypingState& typing,
+                 Sink& sink) {
+  if (!survey.draft) return;
+  if (state.pit != survey.draft->pit) {
+    state = {};
+    state.pit = survey.draft->pit;
+  }
+  const Ui::Part part = ui.part("record");
+  Editing edit{survey, state, *survey.draft};
+  PixelBox left = box;
+  head(ui, cut_top(&left, ui.mm(kTarget_mm), ui.mm(kGap_mm)), edit, typing, sink);
+  switch (state.panel) {
+    case RecordPanel::kMain:
+      main_panel(ui, left, edit, typing, sink);
+      break;
+    case RecordPanel::kStop:
+      stop_panel(ui, left, edit.draft, state);
+      break;
+    case RecordPanel::kNotDug:
+      not_dug_panel(ui, left, edit.draft, state);
+      break;
+    case RecordPanel::kMore:
+      more_panel(ui, left, survey, edit.draft, state, typing, sink);
+      break;
+    case RecordPanel::kMove:
+      move_panel(ui, left, survey, state, typing, sink);
+      break;
+    case RecordPanel::kHistory:
+      history_panel(ui, left, survey, state);
+      break;
+  }
+  if (edit.draft != *survey.draft) sink.send(KeepDraft{edit.draft});
+}
+
+}  // namespace nearpit::ui

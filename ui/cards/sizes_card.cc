@@ -1,0 +1,50 @@
+#include "cards/sizes_card.h"
+
+#include <algorithm>
+
+#include "base/numbers.h"
+
+namespace nearpit::ui {
+namespace {
+
+constexpr double kSmallStep = 1.005;
+constexpr double kLargeStep = 1.03;
+
+}  // namespace
+
+void sizes_card(Ui& ui, const PixelBox& box, SizesState& state, Sink& sink) {
+  const Ui::Part part = ui.part("sizes");
+  if (state.px_per_mm <= 0) state.px_per_mm = ui.glass().px_per_mm;
+  PixelBox left = box;
+  ui.text(cut_top(&left, ui.mm(line_mm(TextSize::kLarge)), ui.mm(1)), "Sizes on this glass",
+          {.size = TextSize::kLarge});
+  ui.text(cut_top(&left, ui.mm(2 * line_mm(TextSize::kBase)), ui.mm(1)),
+          "Hold a bank card against the glass and make the frame as wide as the card, so that buttons are as large as "
+          "a finger in a glove needs.",
+          {.lines = 2});
+  PixelBox foot = cut_bottom(&left, ui.mm(kPrimary_mm), ui.mm(kGap_mm));
+  const auto step = [&](std::string_view name, const std::string& label, double factor) {
+    if (ui.button(name, cut_left(&foot, ui.mm(kPrimary_mm), ui.mm(kGap_mm)), label,
+                  {.least_mm = kPrimary_mm, .size = TextSize::kLarge})) {
+      state.px_per_mm = std::clamp(state.px_per_mm * factor, kLeastPxPerMm, kMostPxPerMm);
+    }
+  };
+  step("much-smaller", "\xE2\x88\x92\xE2\x88\x92", 1 / kLargeStep);
+  step("smaller", "\xE2\x88\x92", 1 / kSmallStep);
+  step("larger", "+", kSmallStep);
+  step("much-larger", "++", kLargeStep);
+  if (ui.button("fits", foot, "The card fits", {.kind = ButtonKind::kPrimary, .least_mm = kPrimary_mm})) {
+    sink.send(SetMillimetre{state.px_per_mm});
+    state.px_per_mm = 0;
+  }
+  const auto width = static_cast<float>(kCardWidth_mm * state.px_per_mm);
+  const auto height = static_cast<float>(kCardHeight_mm * state.px_per_mm);
+  const PixelBox card{left.left, left.top, left.left + width, left.top + height};
+  const PixelBox shown = card.shared_with(left);
+  ui.outline(shown, ui.theme().line, std::max(2.0F, ui.mm(0.5)));
+  ui.line({card.right, left.top}, {card.right, std::min(card.bottom, left.bottom)}, ui.theme().focus,
+          std::max(3.0F, ui.mm(0.8)));
+  ui.text(shown.inset(ui.mm(2)), "85.6 mm wide", {.tone = Tone::kQuiet});
+}
+
+}  // namespace nearpit::ui
