@@ -6,7 +6,6 @@
 #include "base/text.h"
 
 namespace nearpit {
-namespace {
 
 bool is_blank(const PitRecord& record, const std::string& field) {
   if (field == "crew") return record.crew.empty();
@@ -20,6 +19,8 @@ bool is_blank(const PitRecord& record, const std::string& field) {
   if (field == "note") return record.note.empty();
   return false;
 }
+
+namespace {
 
 void judge_entry(const SurveyModel& model, const std::string& label, const PitEntry& entry,
                  std::vector<FileProblem>* found) {

@@ -21,14 +21,6 @@ void take(const Given<std::string>& given, std::string* field) {
   if (given) *field = given->value_or("");
 }
 
-// What stands before: in a conflict the later head, unless that withdraws; else the record that counts; nothing when there is none or it was
-// withdrawn.
-std::optional<PitRecord> standing(const PitEntry* entry) {
-  if (!entry || entry->withdrawn()) return std::nullopt;
-  const PitRecord& latest = entry->heads[entry->verdict.latest].record;
-  return latest.status == PitStatus::kWithdrawn ? entry->record() : latest;
-}
-
 PitRecord blank(const SurveyModel& model) {
   PitRecord record;
   record.counts.assign(model.plan().finds.size(), 0);
@@ -163,12 +155,12 @@ Status settle_status(const SurveyModel& model, const PitName& pit, const RecordP
 Result<PitRecord> new_record(const SurveyModel& model, const PitName& pit, const RecordPit& given,
                              const std::string& why, const WallTime& now) {
   const PitEntry* entry = model.entry(pit);
-  const auto before = standing(entry);
+  const PitRecord* before = entry == nullptr ? nullptr : entry->standing();
   if (entry && entry->verdict.conflict != Conflict::kNone && why.empty()) {
     return bad("why: missing; " + pit.label + " has " + std::to_string(entry->heads.size()) +
                " records that disagree, say why this one holds");
   }
-  PitRecord record = before.value_or(blank(model));
+  PitRecord record = before == nullptr ? blank(model) : *before;
   if (given.status) record.status = given.status->value_or(PitStatus::kDug);
   if (record.status == PitStatus::kWithdrawn) {
     if (!before) {

@@ -5,6 +5,7 @@
 
 #include "base/numbers.h"
 #include "base/text.h"
+#include "session/blank_fields.h"
 
 namespace nearpit {
 namespace {
@@ -19,13 +20,6 @@ constexpr double kDeepest_cm = 1000;
 Error bad(std::string line) { return Error(ErrorKind::kBadInput, std::move(line)); }
 
 // ---- what stands ----
-
-// As judge_record.cc takes it.
-const PitRecord* standing_record(const PitEntry& entry) {
-  if (entry.withdrawn()) return nullptr;
-  const PitRecord& latest = entry.heads[entry.verdict.latest].record;
-  return latest.status == PitStatus::kWithdrawn ? &entry.record() : &latest;
-}
 
 std::string revisions_of(const PitEntry& entry) {
   std::vector<std::string> ids;
@@ -49,7 +43,7 @@ Ground ground_of(const SurveyModel& model, const PitName& pit) {
   ground.named = pit;
   const PitEntry* entry = model.entry(pit);
   if (entry == nullptr) return ground;
-  ground.standing = standing_record(*entry);
+  ground.standing = entry->standing();
   ground.revisions = revisions_of(*entry);
   ground.conflict = entry->verdict.conflict != Conflict::kNone;
   return ground;
@@ -177,7 +171,8 @@ PitRecord shown(const RecordDraft& draft, const SurveyModel& model) {
   return record;
 }
 
-RecordPit first_record(const RecordDraft& draft, const PitRecord& said_now, const std::string& crew) {
+RecordPit first_record(const RecordDraft& draft, const PitRecord& said_now, const SurveyModel& model,
+                       const std::string& crew, const WallTime& now) {
   RecordPit pit;
   pit.status = given<PitStatus>(said_now.status);
   pit.reason = if_said(said_now.reason);
@@ -188,6 +183,9 @@ RecordPit first_record(const RecordDraft& draft, const PitRecord& said_now, cons
   pit.stop = if_said(said_now.stop);
   if (draft.judgement) pit.chosen_by = given<ChosenBy>(ChosenBy::kJudgement);
   if (said_now.status != PitStatus::kDug) return pit;
+  const std::vector<std::string>& required = model.plan().require;
+  if (std::find(required.begin(), required.end(), "dug_at") != required.end())
+    pit.dug_at = given_text(format_time(in_zone(now, model.zone())));
   for (std::size_t i = 0; i < said_now.counts.size(); ++i)
     pit.counts[i] = said_now.counts[i];
   return pit;
@@ -225,29 +223,17 @@ PitRecord as_saved(const RecordDraft& draft, const SurveyModel& model, const Pit
   PitRecord record = shown(draft, model);
   if (standing == nullptr) {
     record.crew = crew;
+    record.dug_at = "at saving";  // action_of() gives it where the plan requires it
+    record.dug_at_defaulted = false;
     return record;
   }
   record.crew = standing->crew;
-  if (!standing->dug_at_defaulted) record.dug_at = standing->dug_at;
+  record.dug_at = standing->dug_at;
+  record.dug_at_defaulted = standing->dug_at_defaulted;
   record.mesh_mm = standing->mesh_mm;
   record.backfilled = standing->backfilled;
   record.bag = standing->bag;
   return record;
-}
-
-// As blank_fields.cc judges a record; here a dug_at that nobody said is empty.
-bool is_blank(const PitRecord& record, const std::string& field) {
-  const std::pair<std::string_view, bool> blank[] = {{"crew", record.crew.empty()},
-                                                     {"started_at", record.started_at.empty()},
-                                                     {"dug_at", record.dug_at.empty()},
-                                                     {"depth_cm", !record.depth_cm},
-                                                     {"stop", !record.stop},
-                                                     {"mesh_mm", !record.mesh_mm},
-                                                     {"bag", record.bag.empty()},
-                                                     {"backfilled", !record.backfilled},
-                                                     {"note", record.note.empty()}};
-  return std::any_of(std::begin(blank), std::end(blank),
-                     [&](const auto& entry) { return entry.first == field && entry.second; });
 }
 
 bool says_nothing(const RecordPit& pit) {
@@ -321,7 +307,8 @@ std::vector<std::string> blanks(const RecordDraft& draft, const SurveyModel& mod
   return blank;
 }
 
-Result<Action> action_of(const RecordDraft& draft, const SurveyModel& model, const std::string& crew) {
+Result<Action> action_of(const RecordDraft& draft, const SurveyModel& model, const std::string& crew,
+                         const WallTime& now) {
   const Ground ground = ground_of(model, draft.pit);
   if (based_elsewhere(draft, ground)) {
     return Error(ErrorKind::kConflict,
@@ -338,7 +325,7 @@ Result<Action> action_of(const RecordDraft& draft, const SurveyModel& model, con
   action.by = crew;
   action.why = said(draft.why);
   if (ground.standing == nullptr) {
-    action.what = first_record(draft, said_now, crew);
+    action.what = first_record(draft, said_now, model, crew, now);
   } else {
     RecordPit pit = further_record(draft, said_now, *ground.standing, ground.conflict);
     if (says_nothing(pit)) return bad(draft.pit + ": nothing is changed; change something, or leave it as it is");

@@ -56,12 +56,13 @@ bool catch_up(RecordDraft* draft, const SurveyModel& model);
 std::vector<std::string> missing(const RecordDraft& draft, const SurveyModel& model);
 
 // Fields that the plan requires of a dug pit and that would stay blank if it were saved now, as `nearpit check` names them. Saving is allowed.
-// dug_at is one of them when it would be the time of saving.
 std::vector<std::string> blanks(const RecordDraft& draft, const SurveyModel& model, const std::string& crew);
 
-// The action that saves the draft; `crew` says so, and has dug a pit that had no record. Errors: kBadInput: something is missing, nothing
+// The action that saves the draft; `crew` says so, and has dug a pit that had no record, at `now` where the plan requires dug_at (else the session fills
+// that in). Errors: kBadInput: something is missing, nothing
 // was changed, `crew` is no name; kConflict: the draft is overtaken.
-Result<Action> action_of(const RecordDraft& draft, const SurveyModel& model, const std::string& crew);
+Result<Action> action_of(const RecordDraft& draft, const SurveyModel& model, const std::string& crew,
+                         const WallTime& now);
 
 // Typing by key pads. Digits and one '.', which is written "0." at the head; zeros at the head are dropped; anything else, and a digit beyond `most`
 // digits, is not taken.

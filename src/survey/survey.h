@@ -21,6 +21,12 @@ struct PitEntry {
   HeadsVerdict verdict;
   const PitRecord& record() const { return heads[verdict.counts].record; }
   bool withdrawn() const { return record().status == PitStatus::kWithdrawn; }
+  // What a further record starts from: in a conflict the later head, unless that withdraws; else the record that counts; nothing when it is withdrawn.
+  const PitRecord* standing() const {
+    if (withdrawn()) return nullptr;
+    const PitRecord& latest = heads[verdict.latest].record;
+    return latest.status == PitStatus::kWithdrawn ? &record() : &latest;
+  }
 };
 
 struct ClosedArea {

@@ -11,6 +11,8 @@
 namespace nearpit {
 namespace {
 
+const WallTime kSaving{1769990400000, 0};
+
 using ::testing::ElementsAre;
 using ::testing::ElementsAreArray;
 using ::testing::HasSubstr;
@@ -190,7 +192,7 @@ TEST(DraftFile, ADraftIsTypedOnAfterACrash) {
   EXPECT_FALSE(catch_up(&drafts[0], session.model()));
   EXPECT_TRUE(typed_anything(drafts[0], session.model()));
   drafts[0].note += "f a word";
-  session.apply({action_of(drafts[0], session.model(), "A").value()}).value();
+  session.apply({action_of(drafts[0], session.model(), "A", kSaving).value()}).value();
   EXPECT_EQ(record_of(session, "T3-3").note, "half a word");
   EXPECT_THAT(record_of(session, "T3-3").counts, ElementsAre(0, 4));
   EXPECT_EQ(record_of(session, "T3-3").started_at, "2026-02-02T15:40:00.000+13:00");

@@ -7,6 +7,8 @@
 namespace nearpit {
 namespace {
 
+const WallTime kSaving{1769990400000, 0};
+
 using ::testing::ElementsAre;
 using ::testing::HasSubstr;
 using ::testing::IsEmpty;
@@ -19,7 +21,7 @@ RecordDraft draft_of(const Session& session, const std::string& pit) {
 }
 
 RecordPit said(const RecordDraft& draft, const Session& session) {
-  return std::get<RecordPit>(action_of(draft, session.model(), "lab").value().what);
+  return std::get<RecordPit>(action_of(draft, session.model(), "lab", kSaving).value().what);
 }
 
 // The fields that an action gives, by name.
@@ -55,7 +57,9 @@ struct Recorded : OneSurvey {
     pit.counts[0] = 2;
     session.apply({{pit, "crew A", "", {}}}).value();
   }
-  void amend(const RecordDraft& draft) { session.apply({action_of(draft, session.model(), "lab").value()}).value(); }
+  void amend(const RecordDraft& draft) {
+    session.apply({action_of(draft, session.model(), "lab", kSaving).value()}).value();
+  }
   Session session;
 };
 
@@ -126,7 +130,7 @@ TEST(RecordDraftAmend, NothingChangedIsNothingToSave) {
   Recorded pit;
   RecordDraft draft = draft_of(pit.session, "T3-3");
   draft.why = "just looking";
-  const auto action = action_of(draft, pit.session.model(), "lab");
+  const auto action = action_of(draft, pit.session.model(), "lab", kSaving);
   ASSERT_FALSE(action);
   EXPECT_EQ(action.error().kind, ErrorKind::kBadInput);
   EXPECT_THAT(action.error().one_line(), HasSubstr("T3-3: nothing is changed"));
@@ -183,7 +187,7 @@ TEST(RecordDraftAmend, APitOffTheGridKeepsItsPlace) {
   draft.counts[0] = "7";
   draft.nothing_found = false;
   draft.why = "counted in the lab";
-  session.apply({action_of(draft, session.model(), "lab").value()}).value();
+  session.apply({action_of(draft, session.model(), "lab", kSaving).value()}).value();
   EXPECT_EQ(record_of(session, "Яма 1").counts[0], 7u);
   EXPECT_EQ(record_of(session, "Яма 1").place->x, 12);
 }
@@ -201,7 +205,7 @@ TEST(RecordDraftAmend, AnOvertakenDraftIsNotSavedUnseen) {
   other.counts[0] = 5;
   pit.session.apply({{other, "B", "more in the bag", {}}}).value();
   EXPECT_TRUE(overtaken(draft, pit.session.model()));
-  const auto refused = action_of(draft, pit.session.model(), "lab");
+  const auto refused = action_of(draft, pit.session.model(), "lab", kSaving);
   ASSERT_FALSE(refused);
   EXPECT_EQ(refused.error().kind, ErrorKind::kConflict);
   EXPECT_THAT(refused.error().one_line(), HasSubstr("T3-3: its record was changed since you opened it"));
@@ -224,7 +228,7 @@ TEST(RecordDraftAmend, ADraftIsOvertakenByAnEarlierHeadToo) {
   draft.why = "measured";
   take_in(both.a.file, both.b.file);
   const Session session = both.b.open();
-  EXPECT_EQ(action_of(draft, session.model(), "B").error().kind, ErrorKind::kConflict);
+  EXPECT_EQ(action_of(draft, session.model(), "B", kSaving).error().kind, ErrorKind::kConflict);
   EXPECT_TRUE(catch_up(&draft, session.model()));
   EXPECT_TRUE(said(draft, session).status);  // all that is shown
 }
@@ -235,7 +239,7 @@ TEST(RecordDraftAmend, ADraftThatWasSavedBeforeACrashHoldsNothingNew) {
   RecordDraft draft = draft_of(session, "T3-3");
   draft.counts[0] = "3";
   draft.note = "two layers";
-  session.apply({action_of(draft, session.model(), "A").value()}).value();
+  session.apply({action_of(draft, session.model(), "A", kSaving).value()}).value();
   EXPECT_TRUE(catch_up(&draft, session.model()));
   EXPECT_FALSE(typed_anything(draft, session.model()));
 }
@@ -250,12 +254,12 @@ TEST(RecordDraftAmend, ANewDraftOvertakenByARecordAmendsIt) {
   EXPECT_TRUE(catch_up(&draft, session.model()));
   EXPECT_TRUE(draft.amends);
   draft.why = "the other was a joke";
-  EXPECT_TRUE(action_of(draft, session.model(), "A"));
+  EXPECT_TRUE(action_of(draft, session.model(), "A", kSaving));
   // And the other way: what it amended was withdrawn.
   session.apply({{WithdrawPit{"T3-3"}, "A", "wrong pit", {}}}).value();
   EXPECT_TRUE(catch_up(&draft, session.model()));
   EXPECT_FALSE(draft.amends);
-  EXPECT_TRUE(session.apply({action_of(draft, session.model(), "A").value()}));
+  EXPECT_TRUE(session.apply({action_of(draft, session.model(), "A", kSaving).value()}));
 }
 
 TEST(RecordDraftAmend, AConflictIsSettledByAllThatIsShown) {
@@ -279,7 +283,7 @@ TEST(RecordDraftAmend, AConflictIsSettledByAllThatIsShown) {
   draft.why = "the flakes were T3-4's";
   EXPECT_THAT(fields_of(said(draft, session)),
               ElementsAre("status", "reason", "started_at", "depth_cm", "stop", "note", "count 0", "count 1"));
-  session.apply({action_of(draft, session.model(), "lab").value()}).value();
+  session.apply({action_of(draft, session.model(), "lab", kSaving).value()}).value();
   const PitEntry* entry = session.model().entry(session.model().name_of("T3-3").value());
   EXPECT_EQ(entry->heads.size(), 1u);
   EXPECT_EQ(entry->record().counts[0], 0u);
@@ -298,7 +302,7 @@ TEST(RecordDraftAmend, AConflictWithAWithdrawalIsFilledFromTheRecordThatCounts) 
   RecordDraft draft = draft_of(session, "T3-3");
   EXPECT_THAT(draft.counts, ElementsAre("3", ""));
   draft.why = "dug after all";
-  ASSERT_TRUE(session.apply({action_of(draft, session.model(), "A").value()}));
+  ASSERT_TRUE(session.apply({action_of(draft, session.model(), "A", kSaving).value()}));
   EXPECT_EQ(record_of(session, "T3-3").counts[0], 3u);
 }
 

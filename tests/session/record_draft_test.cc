@@ -9,6 +9,8 @@
 namespace nearpit {
 namespace {
 
+const WallTime kSaving{1769990400000, 0};
+
 using ::testing::ElementsAre;
 using ::testing::HasSubstr;
 using ::testing::IsEmpty;
@@ -22,9 +24,9 @@ struct Field : OneSurvey {
     return new_draft(model(), model().name_of(pit).value(), {1'770'000'000'000, 0});
   }
   RecordPit said(const RecordDraft& draft) const {
-    return std::get<RecordPit>(action_of(draft, model(), "crew A").value().what);
+    return std::get<RecordPit>(action_of(draft, model(), "crew A", kSaving).value().what);
   }
-  void save(const RecordDraft& draft) { session.apply({action_of(draft, model(), "crew A").value()}).value(); }
+  void save(const RecordDraft& draft) { session.apply({action_of(draft, model(), "crew A", kSaving).value()}).value(); }
 
   Session session;
 };
@@ -137,7 +139,7 @@ TEST(RecordDraft, AFirstRecordGivesWhatWasSaidAndIsTaken) {
   draft.depth_cm = "45.5";
   draft.stop = StopReason::kRoots;
   draft.note = "серый песок\nκάτω";
-  const Action action = action_of(draft, field.model(), "작업조").value();
+  const Action action = action_of(draft, field.model(), "작업조", kSaving).value();
   EXPECT_EQ(action.by, "작업조");
   EXPECT_EQ(action.why, "");
   EXPECT_FALSE(std::get<RecordPit>(action.what).dug_at);
@@ -184,22 +186,22 @@ TEST(RecordDraft, AJudgementPitSaysSo) {
   RecordDraft denied = field.draft("T2-5");
   denied.nothing_found = true;
   denied.judgement = false;
-  const auto refused = field.session.apply({action_of(denied, field.model(), "").value()});
+  const auto refused = field.session.apply({action_of(denied, field.model(), "", kSaving).value()});
   ASSERT_FALSE(refused);
   EXPECT_THAT(refused.error().one_line(), HasSubstr("T2-5 is not due"));
 }
 
 TEST(RecordDraft, WhatIsMissingIsNotSaved) {
   const Field field;
-  const auto action = action_of(field.draft("T3-3"), field.model(), "crew A");
+  const auto action = action_of(field.draft("T3-3"), field.model(), "crew A", kSaving);
   ASSERT_FALSE(action);
   EXPECT_EQ(action.error().kind, ErrorKind::kBadInput);
   EXPECT_EQ(action.error().one_line(), "T3-3: not saved; still to say: what was found, or 'nothing found'");
   RecordDraft draft = field.draft("T3-3");
   draft.nothing_found = true;
-  EXPECT_TRUE(action_of(draft, field.model(), ""));
-  EXPECT_FALSE(action_of(draft, field.model(), "two\nlines"));
-  EXPECT_FALSE(action_of(draft, field.model(), std::string(201, 'x')));
+  EXPECT_TRUE(action_of(draft, field.model(), "", kSaving));
+  EXPECT_FALSE(action_of(draft, field.model(), "two\nlines", kSaving));
+  EXPECT_FALSE(action_of(draft, field.model(), std::string(201, 'x'), kSaving));
 }
 
 // The blank fields that the draft foresees are those that the check of the file then finds.
@@ -208,19 +210,19 @@ TEST(RecordDraft, ForeseesWhatTheCheckCallsBlank) {
   RecordDraft draft = field.draft("T3-3");
   draft.nothing_found = true;
   EXPECT_THAT(blanks(draft, field.model(), ""),
-              ElementsAre("crew", "dug_at", "depth_cm", "stop", "mesh_mm", "backfilled", "bag", "note"));
+              ElementsAre("crew", "depth_cm", "stop", "mesh_mm", "backfilled", "bag", "note"));
   draft.depth_cm = "20";
   draft.note = " ";
-  EXPECT_THAT(blanks(draft, field.model(), "A"), ElementsAre("dug_at", "stop", "mesh_mm", "backfilled", "bag", "note"));
+  EXPECT_THAT(blanks(draft, field.model(), "A"), ElementsAre("stop", "mesh_mm", "backfilled", "bag", "note"));
   draft.stop = StopReason::kRoots;
   draft.note = "dry";
   draft.started_at = "";
   const auto foreseen = blanks(draft, field.model(), "crew A");
-  EXPECT_THAT(foreseen, ElementsAre("started_at", "dug_at", "mesh_mm", "backfilled", "bag"));
+  EXPECT_THAT(foreseen, ElementsAre("started_at", "mesh_mm", "backfilled", "bag"));
   field.save(draft);
   const auto found = blank_fields(field.model());
   ASSERT_EQ(found.size(), 1u);
-  EXPECT_EQ(found.front().what, "the plan requires started_at, dug_at, mesh_mm, backfilled and bag");
+  EXPECT_EQ(found.front().what, "the plan requires started_at, mesh_mm, backfilled and bag");
 
   // A further revision keeps what it does not show.
   RecordPit more;

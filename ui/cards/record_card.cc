@@ -16,6 +16,7 @@ constexpr std::size_t kMostDigits = 6;
 constexpr std::size_t kMostDepthDigits = 5;
 constexpr double kPad_mm = 3 * kTarget_mm + 2 * kGap_mm;
 constexpr double kPadHeight_mm = 4 * kTarget_mm + 3 * kGap_mm;
+constexpr double kMostKey_mm = 18;
 
 // A draft being changed while the card is drawn; sent when it differs.
 struct Editing {
@@ -67,7 +68,7 @@ bool required(const SurveyView& survey, const std::string& field) {
 void find_row(Ui& ui, PixelBox box, Editing& edit, std::size_t find) {
   const std::string& name = edit.survey.model->plan().finds[find];
   const Ui::Part part = ui.part("find-" + std::to_string(find));
-  const float side = ui.mm(kTarget_mm);
+  const float side = std::max(ui.mm(kTarget_mm), std::min(box.height(), ui.mm(kMostKey_mm)));
   if (ui.button("less", cut_left(&box, side, ui.mm(kGap_mm)), "\xE2\x88\x92", {.size = TextSize::kLarge}))
     edit.step(find, -1);
   if (ui.button("more", cut_right(&box, side, ui.mm(kGap_mm)), "+", {.size = TextSize::kLarge})) edit.step(find, 1);
@@ -118,10 +119,12 @@ void open_why(TypingState& typing, const RecordDraft& draft) {
                {"miscounted", "typed wrong", "seen again in the lab"}, 2000);
 }
 
-float main_rows(Ui& ui, PixelBox box, Editing& edit, TypingState& typing) {
+float main_rows(Ui& ui, PixelBox box, float shown, Editing& edit, TypingState& typing) {
   RecordDraft& draft = edit.draft;
-  const float height = ui.mm(kTarget_mm);
   const float gap = ui.mm(kGap_mm);
+  // As tall as there is room for, up to a primary target.
+  const auto rows = static_cast<float>((draft.not_dug ? 2 : edit.finds() + 3) + (draft.amends ? 1 : 0));
+  const float height = std::clamp((shown + gap) / rows - gap, ui.mm(kTarget_mm), ui.mm(kPrimary_mm));
   if (draft.amends && said_row(ui, "why", cut_top(&box, height, gap), "Why changed", draft.why, false))
     open_why(typing, draft);
   if (draft.not_dug) {
@@ -153,6 +156,22 @@ std::string hint(const SurveyView& survey) {
   return "";
 }
 
+// What is still to be said stands on the button; until then it saves nothing.
+void save_button(Ui& ui, const PixelBox& box, Editing& edit, Sink& sink) {
+  const std::vector<std::string> lacking = missing(edit.draft, *edit.survey.model);
+  const bool ready = lacking.empty();
+  const bool asked = ui.button("save", box, edit.draft.amends ? "Save the change" : "Save",
+                               {.kind = ready ? ButtonKind::kPrimary : ButtonKind::kPlain,
+                                .least_mm = kPrimary_mm,
+                                .size = TextSize::kLarge,
+                                .under = ready ? "" : "still to say: " + lacking.front(),
+                                .shorten = true}) ||
+                     ui.take(Key::kEnter);
+  if (!asked || !ready) return;
+  sink.send(KeepDraft{edit.draft});
+  sink.send(SaveRecord{});
+}
+
 void main_panel(Ui& ui, PixelBox box, Editing& edit, TypingState& typing, Sink& sink) {
   const SurveyView& survey = edit.survey;
   RecordDraft& draft = edit.draft;
@@ -170,20 +189,13 @@ void main_panel(Ui& ui, PixelBox box, Editing& edit, TypingState& typing, Sink& 
       ui.take(U'x')) {
     edit.state.panel = RecordPanel::kNotDug;
   }
-  const std::string missing = survey.missing.empty() ? "" : "still to say: " + survey.missing.front();
-  if (ui.button("save", foot, draft.amends ? "Save the change" : "Save",
-                {.kind = survey.missing.empty() ? ButtonKind::kPrimary : ButtonKind::kPlain,
-                 .least_mm = kPrimary_mm,
-                 .size = TextSize::kLarge,
-                 .under = missing,
-                 .shorten = true}) ||
-      ui.take(Key::kEnter)) {
-    sink.send(KeepDraft{draft});
-    sink.send(SaveRecord{});
-  }
-  PixelBox right = cut_right(&box, ui.mm(kPad_mm), ui.mm(kGap_mm));
+  save_button(ui, foot, edit, sink);
   if (!draft.not_dug) {
-    const PixelBox pad = cut_bottom(&right, ui.mm(kPadHeight_mm), ui.mm(1));
+    PixelBox right =
+        cut_right(&box, std::clamp(box.width() * 0.36F, ui.mm(kPad_mm), ui.mm(3 * kMostKey_mm)), ui.mm(kGap_mm));
+    const float pad_height = std::clamp(right.height() - ui.mm(2 * line_mm(TextSize::kSmall)), ui.mm(kPadHeight_mm),
+                                        ui.mm(4 * kMostKey_mm + 3 * kGap_mm));
+    const PixelBox pad = cut_bottom(&right, pad_height, ui.mm(1));
     const std::string field = edit.on_depth() ? "Depth, cm" : survey.model->plan().finds[edit.state.field];
     ui.text(right, survey.missing.empty() && !survey.blanks.empty() ? hint(survey) : field,
             {.size = TextSize::kSmall, .align = Align::kCentre, .tone = Tone::kQuiet, .lines = 3, .shorten = true});
@@ -194,7 +206,7 @@ void main_panel(Ui& ui, PixelBox box, Editing& edit, TypingState& typing, Sink& 
     if (!ui.ring_shown() && ui.take(Key::kUp)) edit.choose((edit.state.field + edit.finds()) % (edit.finds() + 1));
   }
   const PixelBox rows = ui.begin_scroll("rows", box, &edit.state.scroll);
-  ui.end_scroll(main_rows(ui, rows, edit, typing));
+  ui.end_scroll(main_rows(ui, rows, box.height(), edit, typing));
 }
 
 // The row at the top: back, the pit, what it is, more.
@@ -215,12 +227,12 @@ void head(Ui& ui, PixelBox box, Editing& edit, TypingState& typing, Sink& sink) 
     if (ui.take(U's')) state.panel = RecordPanel::kStop;
     if (ui.take(U't')) open_note(typing, edit.draft);
   }
-  PixelBox lines = box;
-  ui.text(cut_top(&lines, box.height() * 0.62F), edit.draft.pit, {.size = TextSize::kLarge, .shorten = true});
+  const float label = std::min(ui.text_width(edit.draft.pit, TextSize::kLarge) + 1, box.width() * 0.6F);
+  ui.text(cut_left(&box, label, ui.mm(2)), edit.draft.pit, {.size = TextSize::kLarge, .shorten = true});
   std::string what = edit.survey.recorded_pit ? edit.survey.recorded_pit->state : "";
   if (edit.draft.judgement) what = "judgement pit";
   if (edit.draft.amends) what = "recorded: " + what;
-  ui.text(lines, what, {.size = TextSize::kSmall, .tone = Tone::kQuiet, .shorten = true});
+  ui.text(box, what, {.size = TextSize::kSmall, .tone = Tone::kQuiet, .lines = 3, .shorten = true});
 }
 
 }  // namespace

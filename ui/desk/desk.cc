@@ -295,7 +295,7 @@ void Desk::write(const Action& action, const std::string& label, const std::stri
 void Desk::carry_out_one(const SaveRecord&) {
   if (!session_ || !view_.survey->draft) return;
   const RecordDraft draft = *view_.survey->draft;
-  const auto action = action_of(draft, session_->model(), view_.survey->crew);
+  const auto action = action_of(draft, session_->model(), view_.survey->crew, now());
   if (!action) {
     view_.notice = {NoticeKind::kNotSaved, draft.pit + ": " + one_text(action.error()), {}};
     return;
