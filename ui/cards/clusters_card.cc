@@ -42,7 +42,7 @@ void clusters_card(Ui& ui, const PixelBox& box, const SurveyView& survey, Cluste
                if (ui.row(label, row, label, chosen)) sink.send(ChoosePit{label});
                const Ui::Part inner = ui.part(label);
                const Tone tone = chosen ? Tone::kOnChosen : Tone::kOnKey;
-               PixelBox inside = row.inset(ui.mm(1));
+               PixelBox inside = in_row(ui, row);
                ui.text(cut_top(&inside, ui.mm(line_mm(TextSize::kBase))),
                        label + ": " + counted(cluster.network.nodes.size(), "positive pit", "positive pits") +
                            ", about " + format_significant(cluster.area_m2, 2) + " m\xC2\xB2",

@@ -1,6 +1,7 @@
 #include "cards/day_card.h"
 
 #include <algorithm>
+#include <cmath>
 #include <set>
 #include <string>
 #include <vector>
@@ -17,6 +18,17 @@ constexpr int kDigits = 2;
 constexpr double kBar_mm = 5;
 
 std::string figure(double value) { return format_significant(value, kDigits); }
+
+// The same with thousands set apart: "22 000".
+std::string big(double value) {
+  std::string text = figure(value);
+  const std::size_t whole = std::min(text.find_first_of(".e"), text.size());
+  for (std::size_t at = whole; at > 3 + (text.front() == '-' ? 1u : 0u);) {
+    at -= 3;
+    text.insert(at, "\xC2\xA0");
+  }
+  return text;
+}
 
 // Writes text down a column.
 struct Column {
@@ -94,26 +106,19 @@ Shown shown(const Estimate& estimate, double pits) {
   return out;
 }
 
-std::string sentence(const Estimate& estimate, double pits) {
+std::string likely(const LikelyRange& range, double factor) {
+  return ", likely " + big(range.lower * factor) + " to " + big(range.upper * factor);
+}
+
+std::string sentence(const Estimate& estimate, double pits, double area_m2) {
   const Shown figures = shown(estimate, pits);
-  const std::string unit = estimate.per_m2 ? " a pit" : " of " + format_fixed(pits, 0) + " pits";
-  std::string text = "about " + figure(figures.value) + unit;
-  if (figures.range)
-    text += ", likely " + figure(figures.range->lower) + " to " + figure(figures.range->upper);
-  else
-    text += "; no range can be given yet";
-  if (estimate.per_m2) {
-    text += ". That is " + figure(*estimate.per_m2) + " per m\xC2\xB2, about " + figure(estimate.total) +
-            " on the whole ground";
-    if (estimate.ground.range) {
-      const double area = estimate.total / std::max(*estimate.per_m2, 1e-300);
-      if (*estimate.per_m2 > 0) {
-        text += " (likely " + figure(estimate.ground.range->lower * area) + " to " +
-                figure(estimate.ground.range->upper * area) + ")";
-      }
-    }
-  }
-  return text + (estimate.status == FigureStatus::kFinal ? "." : ". Not final.");
+  std::string text = "about " + big(figures.value) +
+                     (estimate.per_m2 ? " a pit" : " of " + std::to_string(std::lround(pits)) + " pits");
+  if (figures.range) text += likely(*figures.range, 1);
+  if (!estimate.per_m2) return text + ".";
+  text += "; " + figure(*estimate.per_m2) + " per m\xC2\xB2; about " + big(estimate.total) + " on the whole ground";
+  if (estimate.ground.range) text += likely(*estimate.ground.range, area_m2);
+  return text + ".";
 }
 
 // The likely range as a bar with ends, the figure as a square on it.
@@ -137,7 +142,8 @@ void bar(Ui& ui, const PixelBox& box, const Shown& figures, double most) {
   ui.outline(square, ui.theme().line, thin * 2);
 }
 
-void figures_of(Column& column, const std::vector<const Estimate*>& rows, double pits, const std::string& name) {
+void figures_of(Column& column, const std::vector<const Estimate*>& rows, double pits, double area_m2,
+                const std::string& name) {
   Ui& ui = column.ui;
   column.gap(3);
   column.put(name);
@@ -148,7 +154,7 @@ void figures_of(Column& column, const std::vector<const Estimate*>& rows, double
   }
   for (const Estimate* row : rows) {
     column.gap(1.5);
-    column.put(way(row->estimator) + ": " + sentence(*row, pits), TextSize::kSmall);
+    column.put(way(row->estimator) + ": " + sentence(*row, pits, area_m2), TextSize::kSmall);
     PixelBox line = cut_top(&column.left, ui.mm(kBar_mm));
     line.left += ui.mm(2);
     line.right -= ui.mm(2);
@@ -197,7 +203,9 @@ void day_card(Ui& ui, const PixelBox& box, const SurveyView& survey, DayCardStat
   if (!survey.figures) return;
   const Figures& figures = *survey.figures;
   const SurveyModel& model = *survey.model;
-  const double pits = model.survey().ground().frame.size();
+  const Frame& frame = model.survey().ground().frame;
+  const double pits = frame.size();
+  const double area_m2 = pits * frame.lattice().cell_area_m2();
   paged_text(ui, "text", box, &state.scroll, [&](const PixelBox& start) {
     Column column{ui, start};
     progress_sentences(column, figures.progress);
@@ -213,12 +221,12 @@ void day_card(Ui& ui, const PixelBox& box, const SurveyView& survey, DayCardStat
     std::vector<const Estimate*> rows;
     for (const Estimate& estimate : figures.estimates) {
       if (!rows.empty() && rows.front()->of != estimate.of) {
-        figures_of(column, rows, pits, title_of(*rows.front(), model));
+        figures_of(column, rows, pits, area_m2, title_of(*rows.front(), model));
         rows.clear();
       }
       rows.push_back(&estimate);
     }
-    if (!rows.empty()) figures_of(column, rows, pits, title_of(*rows.front(), model));
+    if (!rows.empty()) figures_of(column, rows, pits, area_m2, title_of(*rows.front(), model));
     missed(column, figures, model.plan().confidence);
     method(column, model.plan().confidence);
     return column.left.top;

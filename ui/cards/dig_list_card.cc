@@ -34,7 +34,7 @@ void due_row(Ui& ui, const PixelBox& box, const DueRow& row, bool chosen, bool a
   if (ui.row(row.label, box, row.label, chosen))
     sink.send(asked ? Request(ChoosePit{row.label}) : Request(WalkTo{row.stop.node}));
   const Ui::Part part = ui.part(row.label);
-  PixelBox inside = box.inset(ui.mm(1));
+  PixelBox inside = in_row(ui, box);
   const PixelBox mark = cut_left(&inside, ui.mm(kMark_mm), ui.mm(2));
   ui.mark(asked ? MarkShape::kDueAsked : MarkShape::kDue, mark.middle(), ui.mm(kMark_mm));
   const Tone tone = chosen ? Tone::kOnChosen : Tone::kOnKey;

@@ -3,6 +3,7 @@
 #include <array>
 #include <string>
 
+#include "field_map/field_map.h"
 #include "widgets/paged_list.h"
 
 namespace nearpit::ui {
@@ -43,6 +44,44 @@ constexpr std::array kLines = {
     KeyLine{"Esc", "to the list; what is typed stays"},
 };
 
+struct MarkLine {
+  PitMark mark;
+  const char* means;
+};
+
+PitMark marked(Mark mark, bool judgement = false, bool conflict = false, bool asked = false) {
+  PitMark out;
+  out.mark = mark;
+  out.judgement = judgement;
+  out.conflict = conflict;
+  out.asked = asked;
+  return out;
+}
+
+float mark_lines(Ui& ui, PixelBox lines) {
+  constexpr double kMark_mm = 6;
+  const MarkLine marks[] = {{marked(Mark::kDue), "to dig"},
+                            {marked(Mark::kPositive), "dug, positive"},
+                            {marked(Mark::kNegative), "dug, negative"},
+                            {marked(Mark::kNotDug), "not dug"},
+                            {marked(Mark::kHalted), "halted: work is stopped near here"},
+                            {marked(Mark::kPlain), "on the grid, not called for"},
+                            {marked(Mark::kNegative, true), "with a stroke under it: judgement pit"},
+                            {marked(Mark::kDue, false, false, true), "asked for around a judgement pit"},
+                            {marked(Mark::kPositive, false, true), "with a corner: two records disagree"}};
+  ui.text(cut_top(&lines, ui.mm(line_mm(TextSize::kBase)), ui.mm(1)), "Marks");
+  for (const MarkLine& line : marks) {
+    PixelBox row = cut_top(&lines, ui.mm(kMark_mm), ui.mm(1));
+    draw_pit_mark(ui, line.mark, cut_left(&row, ui.mm(kMark_mm), ui.mm(2)).middle(), ui.mm(kMark_mm) * 0.9F);
+    ui.text(row, line.means, {.size = TextSize::kSmall});
+  }
+  PixelBox ring = cut_top(&lines, ui.mm(line_mm(TextSize::kSmall)), ui.mm(1));
+  ui.text(ring, "Ring: the next pit. Corner ticks: the pit that is chosen.", {.size = TextSize::kSmall, .lines = 2});
+  ui.text(cut_top(&lines, ui.mm(line_mm(TextSize::kSmall)), ui.mm(2)), "Hatched: closed ground. Tinted: a cluster.",
+          {.size = TextSize::kSmall});
+  return lines.top;
+}
+
 }  // namespace
 
 void keys_card(Ui& ui, const PixelBox& box, bool survey_open, KeysState& state, Sink& sink) {
@@ -51,8 +90,9 @@ void keys_card(Ui& ui, const PixelBox& box, bool survey_open, KeysState& state, 
   PixelBox head = cut_top(&left, ui.mm(kTarget_mm), ui.mm(kGap_mm));
   if (ui.button("back", cut_left(&head, ui.mm(20), ui.mm(kGap_mm)), "Back") || ui.take(Key::kEscape))
     sink.send(ShowCard{survey_open ? CardKind::kDigList : CardKind::kStart});
-  ui.text(head, "List of keys");
+  ui.text(head, "Marks and keys");
   paged_text(ui, "lines", left, &state.scroll, [&](PixelBox lines) {
+    lines.top = mark_lines(ui, lines);
     for (const KeyLine& line : kLines) {
       const bool heading = *line.key == '\0';
       if (heading) {

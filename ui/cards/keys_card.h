@@ -1,4 +1,4 @@
-// Every key that does something, in one list: what the list says is what the screens ask for.
+// What the marks on the map mean, and every key that does something.
 #ifndef NEARPIT_UI_CARDS_KEYS_CARD_H_
 #define NEARPIT_UI_CARDS_KEYS_CARD_H_
 

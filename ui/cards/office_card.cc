@@ -32,7 +32,7 @@ void office_card(Ui& ui, const PixelBox& box, const DeskView& desk, OfficeState&
       sink.send(SetDusk{!desk.dusk});
     if (ui.button("sizes", next(), "Sizes on this glass", {.align = Align::kLeft}))
       sink.send(ShowCard{CardKind::kSizes});
-    if (ui.button("keys", next(), "List of keys", {.align = Align::kLeft})) sink.send(ShowCard{CardKind::kKeys});
+    if (ui.button("keys", next(), "Marks and keys", {.align = Align::kLeft})) sink.send(ShowCard{CardKind::kKeys});
     if (ui.button("close", next(), "Another survey", {.align = Align::kLeft})) sink.send(CloseSurvey{});
     return rows.top - ui.mm(kGap_mm);
   });

@@ -75,7 +75,7 @@ void find_row(Ui& ui, PixelBox box, Editing& edit, std::size_t find) {
   const bool chosen = edit.state.field == find;
   if (ui.row("count", box, name, chosen)) edit.choose(find);
   const std::string& count = edit.draft.counts[find];
-  PixelBox inside = box.inset(ui.mm(1));
+  PixelBox inside = in_row(ui, box);
   const std::string shown = count.empty() ? (edit.draft.nothing_found ? "0" : "\xE2\x80\x93") : count;
   const Tone tone = chosen ? Tone::kOnChosen : Tone::kOnKey;
   const float width = std::min(inside.width() * 0.6F, std::max(ui.mm(8), ui.text_width(shown, TextSize::kLarge) + 1));
@@ -88,7 +88,7 @@ void depth_row(Ui& ui, const PixelBox& box, Editing& edit) {
   const bool chosen = edit.on_depth();
   const bool wanted = required(edit.survey, "depth_cm");
   if (ui.row("depth", box, "Depth", chosen)) edit.choose(edit.finds());
-  PixelBox inside = box.inset(ui.mm(1));
+  PixelBox inside = in_row(ui, box);
   const Tone tone = chosen ? Tone::kOnChosen : Tone::kOnKey;
   const Ui::Part inner = ui.part("depth");
   const std::string shown = edit.draft.depth_cm.empty() ? "\xE2\x80\x93" : edit.draft.depth_cm + " cm";
@@ -101,7 +101,7 @@ void depth_row(Ui& ui, const PixelBox& box, Editing& edit) {
 bool said_row(Ui& ui, const std::string& name, const PixelBox& box, const std::string& label, const std::string& said,
               bool wanted) {
   const bool touched = ui.row(name, box, label, false);
-  PixelBox inside = box.inset(ui.mm(1));
+  PixelBox inside = in_row(ui, box);
   const Ui::Part inner = ui.part(name);
   ui.text(cut_left(&inside, inside.width() * 0.34F, ui.mm(1)), wanted ? label + " (asked for)" : label,
           {.size = TextSize::kSmall, .tone = Tone::kOnKey, .lines = 2});
@@ -158,7 +158,7 @@ std::string hint(const SurveyView& survey) {
 
 // What is still to be said stands on the button; until then it saves nothing.
 void save_button(Ui& ui, const PixelBox& box, Editing& edit, Sink& sink) {
-  const std::vector<std::string> lacking = missing(edit.draft, *edit.survey.model);
+  const std::vector<std::string>& lacking = edit.survey.missing;
   const bool ready = lacking.empty();
   const bool asked = ui.button("save", box, edit.draft.amends ? "Save the change" : "Save",
                                {.kind = ready ? ButtonKind::kPrimary : ButtonKind::kPlain,

@@ -29,7 +29,7 @@ bool two_lines(Ui& ui, const std::string& name, const PixelBox& box, const std::
                const std::string& second) {
   const bool touched = ui.row(name, box, first, false);
   const Ui::Part part = ui.part(name);
-  PixelBox inside = box.inset(ui.mm(1));
+  PixelBox inside = in_row(ui, box);
   ui.text(cut_top(&inside, inside.height() * 0.55F), first, {.tone = Tone::kOnKey, .shorten = true});
   ui.text(inside, second, {.size = TextSize::kSmall, .tone = Tone::kOnKey, .shorten = true});
   return touched;
@@ -109,7 +109,7 @@ void start_card(Ui& ui, const PixelBox& box, const DeskView& desk, StartState& s
   const Ui::Part part = ui.part("start");
   PixelBox left = box;
   PixelBox head = cut_top(&left, ui.mm(kTarget_mm), ui.mm(kGap_mm));
-  if (ui.button("keys", cut_right(&head, ui.mm(26), ui.mm(kGap_mm)), "List of keys", {.size = TextSize::kSmall}))
+  if (ui.button("keys", cut_right(&head, ui.mm(26), ui.mm(kGap_mm)), "Marks and keys", {.size = TextSize::kSmall}))
     sink.send(ShowCard{CardKind::kKeys});
   if (ui.button("sizes", cut_right(&head, ui.mm(26), ui.mm(kGap_mm)), "Sizes", {.size = TextSize::kSmall}))
     sink.send(ShowCard{CardKind::kSizes});

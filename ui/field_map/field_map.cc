@@ -203,7 +203,7 @@ void scale_and_north(const Map& map) {
   ui.line({x, top + ui.mm(9)}, {x, top}, ink, thick);
   ui.line({x, top}, {x - ui.mm(1.5), top + ui.mm(3)}, ink, thick);
   ui.line({x, top}, {x + ui.mm(1.5), top + ui.mm(3)}, ink, thick);
-  ui.text({x + ui.mm(2), top, x + ui.mm(26), top + ui.mm(5)}, "N, of the grid",
+  ui.text({x + ui.mm(2), top, x + ui.mm(26), top + ui.mm(5)}, "grid north",
           {.size = TextSize::kSmall, .tone = Tone::kOnMap});
 }
 

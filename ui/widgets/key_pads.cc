@@ -55,7 +55,7 @@ Struck letter_pad(Ui& ui, const PixelBox& box, LetterPadState* state) {
       const char32_t letter = page[static_cast<std::size_t>(row)][static_cast<std::size_t>(column)];
       if (letter == U'^') {
         if (ui.button("capitals", cell, "Aa", {.chosen = state->capitals})) state->capitals = !state->capitals;
-      } else if (ui.button(utf8_of(letter), cell, utf8_of(letter))) {
+      } else if (ui.button(utf8_of(letter), cell, utf8_of(letter), {.size = TextSize::kLarge})) {
         struck = letter;
         state->capitals = false;
       }

@@ -281,8 +281,12 @@ void Ui::line(Pixel from, Pixel to, const Colour& colour, float thickness_px) {
 void Ui::mark(MarkShape shape, Pixel middle, float size_px) {
   const MarkImage& image = fonts_->mark(shape, size_px);
   const float half = size_px / 2;
-  list_->AddImage(ImGui::GetIO().Fonts->TexID, {middle.x - half, middle.y - half}, {middle.x + half, middle.y + half},
-                  {image.u0, image.v0}, {image.u1, image.v1});
+  const PixelBox box{middle.x - half, middle.y - half, middle.x + half, middle.y + half};
+  const bool whole = box.shared_with(clip_) == box;  // the map draws many thousands, none of them cut by a scroll area
+  if (!whole) list_->PushClipRect(corner(clip_), far_corner(clip_), true);
+  list_->AddImage(ImGui::GetIO().Fonts->TexID, corner(box), far_corner(box), {image.u0, image.v0},
+                  {image.u1, image.v1});
+  if (!whole) list_->PopClipRect();
 }
 
 PixelBox Ui::begin_scroll(std::string_view name, const PixelBox& box, ScrollState* state) {

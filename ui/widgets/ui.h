@@ -176,6 +176,11 @@ class Ui {
   bool wants_letters_ = false;
 };
 
+// What a row leaves for its text.
+inline PixelBox in_row(const Ui& ui, const PixelBox& row) {
+  return {row.left + ui.mm(2), row.top + ui.mm(1), row.right - ui.mm(2), row.bottom - ui.mm(1)};
+}
+
 }  // namespace nearpit::ui
 
 #endif  // NEARPIT_UI_WIDGETS_UI_H_
