@@ -152,20 +152,22 @@ void figures_of(Column& column, const std::vector<const Estimate*>& rows, double
     const Shown figures = shown(*row, pits);
     most = std::max({most, figures.value, figures.range ? figures.range->upper : 0});
   }
+  if (most <= 0) {
+    column.put("none found so far", TextSize::kSmall);
+    return;
+  }
   for (const Estimate* row : rows) {
     column.gap(1.5);
     column.put(way(row->estimator) + ": " + sentence(*row, pits, area_m2), TextSize::kSmall);
     PixelBox line = cut_top(&column.left, ui.mm(kBar_mm));
     line.left += ui.mm(2);
     line.right -= ui.mm(2);
-    if (most > 0) bar(ui, line, shown(*row, pits), most);
+    bar(ui, line, shown(*row, pits), most);
   }
-  if (most > 0) {
-    PixelBox scale = cut_top(&column.left, ui.mm(line_mm(TextSize::kSmall)));
-    ui.text(scale, "0", {.size = TextSize::kSmall, .tone = Tone::kQuiet});
-    ui.text(scale, figure(most) + (rows.front()->per_m2 ? " a pit" : " pits"),
-            {.size = TextSize::kSmall, .align = Align::kRight, .tone = Tone::kQuiet});
-  }
+  const PixelBox scale = cut_top(&column.left, ui.mm(line_mm(TextSize::kSmall)));
+  ui.text(scale, "0", {.size = TextSize::kSmall, .tone = Tone::kQuiet});
+  ui.text(scale, big(most) + (rows.front()->per_m2 ? " a pit" : " pits"),
+          {.size = TextSize::kSmall, .align = Align::kRight, .tone = Tone::kQuiet});
 }
 
 std::string title_of(const Estimate& estimate, const SurveyModel& model) {

@@ -104,8 +104,8 @@ Colour averaged(const Brush& brush, int column, int row, int size) {
 }  // namespace
 
 std::vector<Colour> paint_mark(MarkShape shape, int size, const Theme& theme) {
-  // A line is an eighth of the mark, and never thinner than 1.3 pixels.
-  const Brush brush{shape, theme, std::max(0.25F, 2.6F / static_cast<float>(size))};
+  // A line is a tenth of the mark, and never thinner than 1.2 pixels.
+  const Brush brush{shape, theme, std::max(0.2F, 2.4F / static_cast<float>(size))};
   std::vector<Colour> pixels;
   pixels.reserve(static_cast<std::size_t>(size) * static_cast<std::size_t>(size));
   for (int row = 0; row < size; ++row) {
