@@ -16,7 +16,7 @@ namespace {
 constexpr double kLeastMark_mm = 1.6;
 constexpr double kMostMark_mm = 6.5;
 constexpr float kMarkToSpacing = 0.7F;
-constexpr float kLeastPlainSpacing_px = 5;
+constexpr float kLeastPlainSpacing_px = 3;
 constexpr std::size_t kMostPlain = 25'000;
 constexpr double kLabelSpacing_mm = 14;
 constexpr std::size_t kMostLabels = 400;
@@ -130,9 +130,9 @@ void pits(const Map& map, FieldMapState& state) {
   const Box seen = visible_ground(map.view, map.box);
   state.plain.clear();
   if (map.plain_shown()) plain_nodes(*map.survey.model, seen, kMostPlain, &state.plain);
+  const float dot_px = std::max(1.6F, std::min(map.mark_px, map.spacing_px) * 0.6F);
   for (const NodeId node : state.plain) {
-    if (!map.survey.marks->has_mark(node))
-      map.ui.mark(MarkShape::kDot, map.at(map.ground.frame.ground(node)), map.mark_px * 0.6F);
+    if (!map.survey.marks->has_mark(node)) map.ui.mark(MarkShape::kDot, map.at(map.ground.frame.ground(node)), dot_px);
   }
   map.survey.marks->visible(seen, map.apart_m(), &state.drawn);
   for (const PitMark& mark : state.drawn)
