@@ -95,6 +95,8 @@ void Frontend::frame(InputQueue* queue, const Glass& glass, const Theme& theme, 
   ui.fill(ui.window(), theme.ground.fill);
   draw(ui);
   ring_.moved = false;
+  // What it stood on is gone (a panel closed by it): keys are the card's again.
+  if (find_widget(log_, ring_.path) == nullptr) ring_.shown = false;
   FrameInput left;
   left.key = ui.take_key();
   move_ring(left);
