@@ -1,0 +1,214 @@
+#include "screen/screen_driver.h"
+
+#include <algorithm>
+#include <cmath>
+#include <stdexcept>
+
+namespace nearpit::ui {
+namespace {
+
+constexpr int kMostFrames = 400;
+constexpr int kMostDrags = 80;
+constexpr int kDragSteps = 5;
+
+std::u32string characters(const std::string& utf8) {
+  std::u32string all;
+  for (std::size_t at = 0; at < utf8.size();) {
+    const auto first = static_cast<unsigned char>(utf8[at]);
+    const std::size_t length = first >= 0xF0 ? 4 : first >= 0xE0 ? 3 : first >= 0xC0 ? 2 : 1;
+    char32_t value = length == 1 ? first : first & (0xFFU >> (length + 1));
+    for (std::size_t i = 1; i < length; ++i)
+      value = value << 6 | (static_cast<unsigned char>(utf8[at + i]) & 0x3FU);
+    all += value;
+    at += length;
+  }
+  return all;
+}
+
+bool whole(const WidgetBox& widget) {
+  return !widget.visible.empty() && widget.visible.height() > widget.box.height() - 1 &&
+         widget.visible.width() > widget.box.width() - 1;
+}
+
+// The scroll area that the control was drawn in: the last one before it that reaches over it sideways.
+const WidgetBox* area_of(const WidgetLog& log, const WidgetBox& widget) {
+  const WidgetBox* area = nullptr;
+  for (const WidgetBox& one : log.widgets) {
+    if (&one == &widget) return area;
+    const float middle = widget.box.middle().x;
+    if (one.kind == WidgetKind::kScroll && one.box.left <= middle && middle <= one.box.right) area = &one;
+  }
+  return area;
+}
+
+}  // namespace
+
+ScreenDriver::ScreenDriver(const ScreenWorld& world, const TestGlass& glass, const std::string& file)
+    : environment_(world.environment()), desk_(environment_), test_glass_(glass) {
+  if (!file.empty()) desk_.carry_out(OpenSurvey{file});
+  idle_.changed = true;
+  settle();
+}
+
+void ScreenDriver::draw() {
+  glass_ = {test_glass_.width_px, test_glass_.height_px, desk_.view().px_per_mm.value_or(test_glass_.px_per_mm())};
+  frontend_.frame(&queue_, glass_, desk_.view().dusk ? dusk_theme() : sun_theme(),
+                  [this](Ui& ui) { draw_screen(ui, desk_.view(), screen_, sink_); });
+  const std::vector<Request> asked = sink_.take();
+  for (const Request& request : asked)
+    desk_.carry_out(request);
+  idle_ = after_frame(idle_, frontend_.unsettled());
+  idle_.changed = !asked.empty();
+  idle_.input_waits = !queue_.empty();
+  ++frames_;
+}
+
+void ScreenDriver::settle() {
+  idle_.input_waits = !queue_.empty();
+  for (int i = 0; next_step(idle_, now_).next == Next::kDraw; ++i) {
+    if (i > kMostFrames) throw std::runtime_error("the screen never comes to rest\n" + on_the_glass());
+    draw();
+  }
+}
+
+void ScreenDriver::set_glass(const TestGlass& glass) {
+  test_glass_ = glass;
+  idle_.changed = true;
+  settle();
+}
+
+std::vector<unsigned char> ScreenDriver::pixels() {
+  frontend_.render();
+  return frontend_.read_pixels();
+}
+
+void ScreenDriver::add(const InputEvent& event) { queue_.add(event); }
+
+void ScreenDriver::press(Pixel at) {
+  ++touches_;
+  add(PointerPressed{at});
+  settle();
+}
+
+void ScreenDriver::move(Pixel to) {
+  add(PointerMoved{to});
+  settle();
+}
+
+void ScreenDriver::release(Pixel at) {
+  add(PointerReleased{at});
+  settle();
+}
+
+void ScreenDriver::tap_at(Pixel at) {
+  press(at);
+  release(at);
+}
+
+void ScreenDriver::tap(const std::string& path) {
+  bring_into_view(path);
+  tap_at(middle_of(path));
+}
+
+void ScreenDriver::tap_all(const std::vector<std::string>& paths) {
+  for (const std::string& path : paths)
+    tap(path);
+}
+
+void ScreenDriver::drag(Pixel from, Pixel to) {
+  add(PointerPressed{from});
+  settle();
+  for (int step = 1; step <= kDragSteps; ++step) {
+    const float part = static_cast<float>(step) / kDragSteps;
+    move({from.x + (to.x - from.x) * part, from.y + (to.y - from.y) * part});
+  }
+  release(to);
+}
+
+void ScreenDriver::wheel(Pixel at, float steps) {
+  add(WheelTurned{at, steps});
+  settle();
+}
+
+void ScreenDriver::key(Key key, int times) {
+  for (int i = 0; i < times; ++i) {
+    add(KeyStruck{key});
+    settle();
+  }
+}
+
+void ScreenDriver::type(const std::string& utf8) {
+  for (const char32_t character : characters(utf8)) {
+    add(CharacterTyped{character});
+    settle();
+  }
+}
+
+// ---- looking ----
+
+const WidgetBox& ScreenDriver::widget(const std::string& path) const {
+  const WidgetBox* found = find_widget(log(), path);
+  if (found == nullptr) throw std::runtime_error("no control '" + path + "' is drawn\n" + on_the_glass());
+  return *found;
+}
+
+std::string ScreenDriver::said(const std::string& path) const {
+  std::string all;
+  for (const TextBox& text : log().texts) {
+    if (text.path.starts_with(path)) all += (all.empty() ? "" : " ") + text.text;
+  }
+  return all;
+}
+
+const WidgetBox* ScreenDriver::focused() const {
+  const auto& widgets = log().widgets;
+  const auto found = std::find_if(widgets.begin(), widgets.end(), [](const WidgetBox& one) { return one.focused; });
+  return found == widgets.end() ? nullptr : &*found;
+}
+
+std::string ScreenDriver::on_the_glass() const { return "on the glass:\n" + widget_lines(log()); }
+
+// ---- bringing into view ----
+
+// Moves the area's content by `by` pixels, upwards when negative; whether anything moved.
+bool ScreenDriver::drag_area(const std::string& area, float by) {
+  const std::string before = widget_lines(log());
+  const PixelBox box = widget(area).visible;
+  const float most = box.height() * 0.45F;
+  // A finger goes a little before the content follows.
+  const float sure = by < 0 ? std::min(by, -glass_.px(3) - 2) : std::max(by, glass_.px(3) + 2);
+  const Pixel from = box.middle();
+  drag(from, {from.x, from.y + std::clamp(sure, -most, most)});
+  return widget_lines(log()) != before;
+}
+
+// Pages every list there is for a control that is not drawn.
+bool ScreenDriver::look_for(const std::string& path) {
+  std::vector<std::string> areas;
+  for (const WidgetBox& one : log().widgets) {
+    if (one.kind == WidgetKind::kScroll) areas.push_back(one.path);
+  }
+  for (const std::string& area : areas) {
+    for (const float way : {-1.0F, 1.0F}) {
+      for (int i = 0; i < kMostDrags && !shows(path); ++i) {
+        if (!drag_area(area, way * widget(area).visible.height())) break;
+      }
+      if (shows(path)) return true;
+    }
+  }
+  return false;
+}
+
+void ScreenDriver::bring_into_view(const std::string& path) {
+  if (!shows(path) && !look_for(path)) widget(path);
+  for (int i = 0; i < kMostDrags; ++i) {
+    const WidgetBox one = widget(path);
+    if (whole(one)) return;
+    const WidgetBox* area = area_of(log(), widget(path));
+    if (area == nullptr) return;
+    const float by = one.box.top < area->box.top ? area->box.top - one.box.top : area->box.bottom - one.box.bottom;
+    if (!drag_area(area->path, by)) return;
+  }
+}
+
+}  // namespace nearpit::ui

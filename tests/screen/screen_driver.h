@@ -1,0 +1,95 @@
+// The whole screen with a desk behind it and no window around it, run frame by frame as ui/window/app_window.cc runs it. What goes in goes through the
+// input queue: pointer and keys, nothing else. What comes out is read from the log of controls and texts, and from the disk.
+#ifndef NEARPIT_TESTS_SCREEN_SCREEN_DRIVER_H_
+#define NEARPIT_TESTS_SCREEN_SCREEN_DRIVER_H_
+
+#include <string>
+#include <vector>
+
+#include "desk/desk.h"
+#include "idle_policy.h"
+#include "screen.h"
+#include "screen/screen_world.h"
+#include "widgets/frontend.h"
+
+namespace nearpit::ui {
+
+struct TestGlass {
+  float width_px = 1280;
+  float height_px = 800;
+  double scale = 1.5;  // of 96 px an inch
+  double px_per_mm() const { return 96 / 25.4 * scale; }
+};
+
+// What can't be done (no such control, nothing settles) is thrown as std::runtime_error and fails the test with what is on the screen.
+class ScreenDriver {
+ public:
+  // The program started without a file, or with one.
+  explicit ScreenDriver(const ScreenWorld& world, const TestGlass& glass = {}, const std::string& file = "");
+
+  // Press and release in the middle of the control, brought into view by dragging its list where it is outside.
+  void tap(const std::string& path);
+  void tap_at(Pixel at);
+  // A tap at each, in this order.
+  void tap_all(const std::vector<std::string>& paths);
+  void press(Pixel at);
+  void move(Pixel to);
+  void release(Pixel at);
+  // A finger put down, drawn over the glass in steps, lifted.
+  void drag(Pixel from, Pixel to);
+  void wheel(Pixel at, float steps);
+  void key(Key key, int times = 1);
+  void type(const std::string& utf8);
+  // Several events before any frame.
+  void add(const InputEvent& event);
+  // Draws as long as the idle policy says so.
+  void settle();
+
+  // Presses so far; drags to bring something into view are not counted.
+  int touches() const { return touches_; }
+  int frames() const { return frames_; }
+
+  const WidgetLog& log() const { return frontend_.log(); }
+  bool shows(const std::string& path) const { return find_widget(log(), path) != nullptr; }
+  const WidgetBox& widget(const std::string& path) const;
+  Pixel middle_of(const std::string& path) const { return widget(path).visible.middle(); }
+  // All texts whose path begins so, joined by spaces; "" for every text on the glass.
+  std::string said(const std::string& path = "") const;
+  const WidgetBox* focused() const;
+
+  // For asserts alone.
+  const DeskView& view() const { return desk_.view(); }
+  const MapView& map_view() const { return *screen_.map.view; }
+  PixelBox map_box() const { return screen_.map.box; }
+
+  const Glass& glass() const { return glass_; }
+  void set_glass(const TestGlass& glass);
+  // With an OpenGL context that is current.
+  void start_gl() { frontend_.start_gl().value(); }
+  void stop_gl() { frontend_.stop_gl(); }
+  std::vector<unsigned char> pixels();
+
+ private:
+  void draw();
+  void bring_into_view(const std::string& path);
+  bool look_for(const std::string& path);
+  bool drag_area(const std::string& area, float by);
+  std::string on_the_glass() const;
+
+  Environment environment_;
+  Frontend frontend_;
+  Desk desk_;
+  ScreenState screen_;
+  Sink sink_;
+  InputQueue queue_;
+  TestGlass test_glass_;
+  Glass glass_;
+  IdleState idle_;
+  Milliseconds now_ = 0;
+  int touches_ = 0;
+  int frames_ = 0;
+};
+
+}  // namespace nearpit::ui
+
+#endif  // NEARPIT_TESTS_SCREEN_SCREEN_DRIVER_H_
