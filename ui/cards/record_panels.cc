@@ -4,6 +4,7 @@
 #include <span>
 #include <string>
 
+#include "cards/history_lines.h"
 #include "desk/words.h"
 #include "widgets/paged_list.h"
 
@@ -146,20 +147,8 @@ void move_panel(Ui& ui, const PixelBox& box, const SurveyView& survey, RecordCar
 
 void history_panel(Ui& ui, const PixelBox& box, const SurveyView& survey, RecordCardState& state) {
   const Ui::Part part = ui.part("history");
-  paged_text(ui, "lines", box, &state.history, [&](PixelBox left) {
-    for (const HistoryLine& line : survey.recorded_pit->history) {
-      const std::string who = line.by.empty() ? "" : ", " + line.by;
-      const std::string why = line.why.empty() ? "" : " (why: " + line.why + ")";
-      const auto put = [&](const std::string& text, TextSize size, Tone tone) {
-        const float height = ui.text_height(text, left.width(), size);
-        ui.text(cut_top(&left, height), text, {.size = size, .tone = tone, .lines = 40, .shorten = true, .top = true});
-      };
-      put(line.when + who, TextSize::kSmall, Tone::kQuiet);
-      put(line.what + why, TextSize::kBase, Tone::kPlain);
-      left.top += ui.mm(kGap_mm);
-    }
-    return left.top;
-  });
+  paged_text(ui, "lines", box, &state.history,
+             [&](const PixelBox& lines) { return history_lines(ui, lines, survey.recorded_pit->history); });
 }
 
 }  // namespace nearpit::ui

@@ -5,10 +5,12 @@
 #include <algorithm>
 #include <cmath>
 
+#include "cards/history_lines.h"
 #include "desk/words.h"
 #include "field_map/hatch.h"
 #include "field_map/map_pick.h"
 #include "field_map/scale_bar.h"
+#include "widgets/paged_list.h"
 
 namespace nearpit::ui {
 namespace {
@@ -25,6 +27,7 @@ constexpr double kFitMargin_mm = 6;
 constexpr double kZoomStep = 1.5;
 constexpr double kWheelStep = 1.2;
 constexpr double kHatch_mm = 3;
+constexpr double kHistory_mm = 40;
 
 ImU32 packed(const Colour& colour) { return IM_COL32(colour.red, colour.green, colour.blue, colour.alpha); }
 
@@ -198,6 +201,8 @@ void scale_and_north(const Map& map) {
   ui.line({left + bar.px, bottom - ui.mm(1.5)}, {left + bar.px, bottom}, ink, thick);
   ui.text({left, bottom - ui.mm(6.5), left + std::max(bar.px, ui.mm(16)), bottom - ui.mm(2)}, bar.text,
           {.size = TextSize::kSmall, .tone = Tone::kOnMap});
+  ui.fill({map.box.left + ui.mm(2), map.box.top + ui.mm(2), map.box.left + ui.mm(25), map.box.top + ui.mm(8)},
+          ui.theme().map.fill);
   const float x = map.box.left + ui.mm(5);
   const float top = map.box.top + ui.mm(3);
   ui.line({x, top + ui.mm(9)}, {x, top}, ink, thick);
@@ -207,30 +212,51 @@ void scale_and_north(const Map& map) {
           {.size = TextSize::kSmall, .tone = Tone::kOnMap});
 }
 
-// The chosen pit's label, what it is, why it is due, and what to do with it.
-void chosen_panel(Ui& ui, PixelBox* box, const SurveyView& survey, Sink& sink) {
-  const ChosenPit& pit = *survey.chosen;
-  const float height = ui.mm(kTarget_mm + 2);
-  PixelBox panel = cut_bottom(box, height);
-  ui.fill(panel, ui.theme().ground.fill);
-  ui.line({panel.left, panel.top}, {panel.right, panel.top}, ui.theme().line, std::max(1.0F, ui.mm(0.4)));
-  panel = panel.inset(ui.mm(1));
-  const bool recorded = pit.mark.mark == Mark::kNegative || pit.mark.mark == Mark::kPositive ||
-                        (pit.mark.mark == Mark::kNotDug && !pit.history.empty());
-  const bool due = pit.mark.mark == Mark::kDue && !pit.mark.asked;
-  const std::string verb = recorded ? "Open record" : due ? "Record" : "Record as judgement";
-  if (ui.button("record-chosen", cut_right(&panel, ui.mm(27), ui.mm(kGap_mm)), verb, {.size = TextSize::kSmall}))
-    sink.send(OpenRecord{pit.name.label});
-  PixelBox lines = panel;
-  const float label = std::min(ui.text_width(pit.name.label, TextSize::kBase) + 1, panel.width() * 0.5F);
-  PixelBox first = cut_top(&lines, panel.height() / 2);
-  ui.text(cut_left(&first, label, ui.mm(2)), pit.name.label, {.shorten = true});
-  ui.text(first, pit.state, {.size = TextSize::kSmall, .lines = 1, .shorten = true});
+// One line of the panel: what the pit is, and why it is due or what was last written of it.
+void chosen_lines(Ui& ui, PixelBox box, const ChosenPit& pit, Tone tone) {
+  const float label = std::min(ui.text_width(pit.name.label, TextSize::kBase) + 1, box.width() * 0.5F);
+  PixelBox first = cut_top(&box, box.height() / 2);
+  ui.text(cut_left(&first, label, ui.mm(2)), pit.name.label, {.tone = tone, .shorten = true});
+  ui.text(first, pit.state, {.size = TextSize::kSmall, .tone = tone, .lines = 1, .shorten = true});
   std::string second;
   for (const std::string& why : pit.why)
     second += (second.empty() ? "" : ", ") + why;
   if (second.empty() && !pit.history.empty()) second = pit.history.front().when + ": " + pit.history.front().what;
-  ui.text(lines, second, {.size = TextSize::kSmall, .tone = Tone::kQuiet, .shorten = true});
+  ui.text(box, second, {.size = TextSize::kSmall, .tone = tone, .shorten = true});
+}
+
+std::string verb_for(const ChosenPit& pit) {
+  const bool recorded = pit.mark.mark == Mark::kNegative || pit.mark.mark == Mark::kPositive ||
+                        (pit.mark.mark == Mark::kNotDug && !pit.history.empty());
+  if (recorded) return "Open record";
+  return pit.mark.mark == Mark::kDue && !pit.mark.asked ? "Record" : "Record as judgement";
+}
+
+// The chosen pit: what it is and what to do with it; touching it shows everything that was written of it.
+void chosen_panel(Ui& ui, PixelBox* box, const SurveyView& survey, FieldMapState& state, Sink& sink) {
+  const ChosenPit& pit = *survey.chosen;
+  const float row_height = ui.mm(kTarget_mm + 2);
+  const bool details = state.details && !pit.history.empty();
+  const float history = details ? std::min(ui.mm(kHistory_mm), box->height() * 0.5F) : 0;
+  PixelBox panel = cut_bottom(box, row_height + history);
+  ui.fill(panel, ui.theme().ground.fill);
+  ui.line({panel.left, panel.top}, {panel.right, panel.top}, ui.theme().line, std::max(1.0F, ui.mm(0.4)));
+  PixelBox row = cut_top(&panel, row_height).inset(ui.mm(1));
+  if (ui.button("record-chosen", cut_right(&row, ui.mm(27), ui.mm(kGap_mm)), verb_for(pit), {.size = TextSize::kSmall}))
+    sink.send(OpenRecord{pit.name.label});
+  if (pit.history.empty()) {
+    chosen_lines(ui, row, pit, Tone::kPlain);
+  } else {
+    if (ui.row("history", row, details ? "less" : "history", details)) state.details = !state.details;
+    const Ui::Part part = ui.part("history");
+    PixelBox inside = in_row(ui, row);
+    ui.text(cut_right(&inside, ui.mm(5), ui.mm(1)), details ? "\xE2\x86\x93" : "\xE2\x86\x91",
+            {.align = Align::kCentre, .tone = details ? Tone::kOnChosen : Tone::kOnKey});
+    chosen_lines(ui, inside, pit, details ? Tone::kOnChosen : Tone::kOnKey);
+  }
+  if (!details) return;
+  paged_text(ui, "history-lines", panel.inset(ui.mm(1)), &state.history,
+             [&](const PixelBox& lines) { return history_lines(ui, lines, pit.history); });
 }
 
 struct Moves {
@@ -299,7 +325,7 @@ void field_map(Ui& ui, const PixelBox& box, const SurveyView& survey, FieldMapSt
   if (survey.chosen) corner_ticks(map, survey.chosen->mark.place);
   list->PopClipRect();
   ui.outline(box, ui.theme().line, std::max(1.0F, ui.mm(0.4)));
-  if (survey.chosen) chosen_panel(ui, &map_box, survey, sink);
+  if (survey.chosen) chosen_panel(ui, &map_box, survey, state, sink);
   scale_and_north({ui, map_box, survey, *state.view, ground, spacing_px, mark_px});
   Moves moves;
   buttons_and_keys(ui, map_box, &moves);
@@ -310,7 +336,10 @@ void field_map(Ui& ui, const PixelBox& box, const SurveyView& survey, FieldMapSt
   if (touch.wheel != 0) next = zoomed(next, box, touch.pointer, std::pow(kWheelStep, touch.wheel), limits);
   if (moves.zoom != 1) next = zoomed(next, box, map_box.middle(), moves.zoom, limits);
   if (moves.fit) next = fitted(whole, box, ui.mm(kFitMargin_mm));
-  if (moves.to_next && survey.proposed) next.centre = survey.proposed->stop.place;
+  if (moves.to_next && survey.proposed) {
+    next.centre = survey.proposed->stop.place;
+    next = panned(next, map_box.middle().x - box.middle().x, map_box.middle().y - box.middle().y);
+  }
   if (touch.tapped) {
     const Point place = to_ground(*state.view, box, *touch.tapped);
     const auto pit = nearest_pit(*survey.model, *survey.marks, place, ui.mm(kPick_mm) / state.view->px_per_m,

@@ -18,6 +18,8 @@ struct FieldMapState {
   PixelBox box;    // where it was drawn last
   std::optional<MapView> view;
   TouchState touch;
+  bool details = false;  // the chosen pit's whole history is shown
+  ScrollState history;
   std::vector<PitMark> drawn;  // kept so that a frame asks for no memory
   std::vector<NodeId> plain;
 };

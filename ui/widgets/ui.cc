@@ -309,7 +309,8 @@ PixelBox Ui::begin_scroll(std::string_view name, const PixelBox& box, ScrollStat
   state->offset = std::round(std::clamp(state->offset, 0.0F, std::max(0.0F, state->content - box.height())));
   log_->widgets.push_back({path_of(name), WidgetKind::kScroll, box, box.shared_with(clip_), 0, "", false, false});
   scrolls_.push_back({box, state, clip_, log_->widgets.size()});
-  clip_ = box.shared_with(clip_);
+  // A little more than the box, for outlines and the keyboard's ring.
+  clip_ = box.inset(-mm(kRing_mm)).shared_with(clip_);
   ImGui::PushClipRect(corner(clip_), far_corner(clip_), true);
   return {box.left, box.top - state->offset, box.right, box.bottom};
 }
