@@ -14,6 +14,7 @@ constexpr double kSide_mm = 1.5;
 constexpr double kLeastCard_mm = 122;
 constexpr double kMostCard_mm = 160;
 constexpr double kLeastMap_mm = 60;
+constexpr double kLeastHeight_mm = 124;
 
 void typed_for(const TypingState& typing, TypingAnswer answer, const DeskView& desk, ScreenState& state, Sink& sink) {
   const std::string& text = typing.line.text;
@@ -146,12 +147,7 @@ void survey_screen(Ui& ui, PixelBox box, const DeskView& desk, ScreenState& stat
   if (!narrow || state.map_shown) field_map(ui, box, *desk.survey, state.map, sink);
 }
 
-}  // namespace
-
-void draw_screen(Ui& ui, const DeskView& desk, ScreenState& state, Sink& sink) {
-  PixelBox box = ui.window();
-  box = {box.left + ui.mm(kSide_mm), box.top + ui.mm(kMargin_mm), box.right - ui.mm(kSide_mm),
-         box.bottom - ui.mm(kMargin_mm)};
+void what_is_shown(Ui& ui, const PixelBox& box, const DeskView& desk, ScreenState& state, Sink& sink) {
   if (state.typing.what != TypingFor::kNothing) {
     typing_over_all(ui, box, desk, state, sink);
   } else if (desk.card == CardKind::kSizes) {
@@ -166,6 +162,29 @@ void draw_screen(Ui& ui, const DeskView& desk, ScreenState& state, Sink& sink) {
     start_card(ui, box, desk, state.start, state.typing, sink);
     keys_of_the_screen(ui, desk, sink);
   }
+}
+
+}  // namespace
+
+void draw_screen(Ui& ui, const DeskView& desk, ScreenState& state, Sink& sink) {
+  PixelBox box = ui.window();
+  box = {box.left + ui.mm(kSide_mm), box.top + ui.mm(kMargin_mm), box.right - ui.mm(kSide_mm),
+         box.bottom - ui.mm(kMargin_mm)};
+  if (box.height() >= ui.mm(kLeastHeight_mm)) {
+    what_is_shown(ui, box, desk, state, sink);
+    return;
+  }
+  // Too low for what must stand on it: drawn at the least height, with buttons to move it up and down.
+  PixelBox buttons = cut_right(&box, ui.mm(kTarget_mm), ui.mm(kGap_mm));
+  const Ui::Part part = ui.part("whole");
+  const float step = box.height() * 0.6F;
+  if (ui.button("up", cut_top(&buttons, (buttons.height() - ui.mm(kGap_mm)) / 2, ui.mm(kGap_mm)), "\xE2\x86\x91"))
+    state.whole.offset -= step;
+  if (ui.button("down", buttons, "\xE2\x86\x93")) state.whole.offset += step;
+  PixelBox content = ui.begin_scroll("glass", box, &state.whole, false);
+  content.bottom = content.top + ui.mm(kLeastHeight_mm);
+  what_is_shown(ui, content, desk, state, sink);
+  ui.end_scroll(content.bottom);
 }
 
 }  // namespace nearpit::ui

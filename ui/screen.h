@@ -29,6 +29,7 @@ struct ScreenState {
   TypingState typing;
   FieldMapState map;
   ScrollState notice;
+  ScrollState whole;       // on a glass too low for a card
   bool map_shown = false;  // on a glass too narrow for map and card: the map is shown
 };
 

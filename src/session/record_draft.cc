@@ -271,6 +271,12 @@ bool overtaken(const RecordDraft& draft, const SurveyModel& model) {
   return based_elsewhere(draft, ground_of(model, draft.pit));
 }
 
+Status not_overtaken(const RecordDraft& draft, const SurveyModel& model) {
+  if (!overtaken(draft, model)) return ok_status();
+  return Error(ErrorKind::kConflict,
+               draft.pit + ": its record was changed since you opened it; look at it, then save again");
+}
+
 bool catch_up(RecordDraft* draft, const SurveyModel& model) {
   draft->counts.resize(std::max(draft->counts.size(), model.plan().finds.size()));
   const Ground ground = ground_of(model, draft->pit);
@@ -310,10 +316,7 @@ std::vector<std::string> blanks(const RecordDraft& draft, const SurveyModel& mod
 Result<Action> action_of(const RecordDraft& draft, const SurveyModel& model, const std::string& crew,
                          const WallTime& now) {
   const Ground ground = ground_of(model, draft.pit);
-  if (based_elsewhere(draft, ground)) {
-    return Error(ErrorKind::kConflict,
-                 draft.pit + ": its record was changed since you opened it; look at it, then save again");
-  }
+  NEARPIT_TRY(not_overtaken(draft, model));
   if (const auto lacking = missing(draft, model); !lacking.empty()) {
     return bad((draft.pit.empty() ? "" : draft.pit + ": ") + "not saved; still to say: " + join(lacking, "; "));
   }

@@ -48,6 +48,8 @@ bool typed_anything(const RecordDraft& draft, const SurveyModel& model);
 // Somebody wrote of the pit since the draft was filled (another program, another tablet's file; or a crash came between a save and the removal of its
 // draft: then typed_anything says that nothing would be lost).
 bool overtaken(const RecordDraft& draft, const SurveyModel& model);
+// kConflict where it is: nothing of it may be written before somebody has looked.
+Status not_overtaken(const RecordDraft& draft, const SurveyModel& model);
 // Bases the draft on what stands now and keeps everything typed; true when it was overtaken, so that the person is told. To be called for drafts read
 // from a file and after changes of the survey by others.
 bool catch_up(RecordDraft* draft, const SurveyModel& model);

@@ -89,9 +89,11 @@ Status Session::catch_up() {
   return take_objects(file_.path(), log_, *model_, &changed);
 }
 
-Result<Applied> Session::apply(const std::vector<Action>& actions) {
+Result<Applied> Session::apply(const std::vector<Action>& actions,
+                               const std::function<Status(const SurveyModel&)>& still_holds) {
   NEARPIT_ASSIGN(transaction, file_.begin());
   NEARPIT_TRY(catch_up());
+  if (still_holds) NEARPIT_TRY(still_holds(*model_));
   NEARPIT_ASSIGN(writer, choose_writer(file_, survey_id_, *environment_));
   RevisionMaker maker(*environment_, writer.row.id, writer.row.last_seq, writer.row.last_hash, log_.largest_clock(),
                       model_->zone());

@@ -3,6 +3,7 @@
 #ifndef NEARPIT_SESSION_SESSION_H_
 #define NEARPIT_SESSION_SESSION_H_
 
+#include <functional>
 #include <memory>
 #include <optional>
 #include <string>
@@ -36,8 +37,10 @@ class Session {
   // Errors: as SurveyFile::open; a plan or a record in the file that can't be read.
   static Result<Session> open(const std::string& path, Environment& environment, bool read_only);
 
-  // All or nothing. Errors: every finding of the batch; the file can't be written (then nothing was recorded).
-  Result<Applied> apply(const std::vector<Action>& actions);
+  // All or nothing. Errors: every finding of the batch; the file can't be written (then nothing was recorded). What others wrote meanwhile is taken in first;
+  // `still_holds`, if given, then looks at the survey while nobody else can write, and its error refuses everything.
+  Result<Applied> apply(const std::vector<Action>& actions,
+                        const std::function<Status(const SurveyModel&)>& still_holds = {});
 
   DigOrder dig_order(const std::string& crew, const std::optional<Point>& from) const;
   // All records, or only revisions whose wall time lies not later than the day (2026-05-04, in the plan's zone).

@@ -175,7 +175,7 @@ std::string title_of(const Estimate& estimate, const SurveyModel& model) {
   std::vector<std::string> finds;
   for (const std::size_t find : model.plan().positive.finds)
     finds.push_back(model.plan().finds[find]);
-  return "what makes a pit positive: " + list_in_words(finds);
+  return "target finds: " + list_in_words(finds);
 }
 
 void missed(Column& column, const Figures& figures, double confidence) {

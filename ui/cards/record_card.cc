@@ -92,7 +92,7 @@ void depth_row(Ui& ui, const PixelBox& box, Editing& edit) {
   const Tone tone = chosen ? Tone::kOnChosen : Tone::kOnKey;
   const Ui::Part inner = ui.part("depth");
   const std::string shown = edit.draft.depth_cm.empty() ? "\xE2\x80\x93" : edit.draft.depth_cm + " cm";
-  ui.text(cut_right(&inside, inside.width() * 0.6F), shown,
+  ui.text(cut_right(&inside, inside.width() * 0.45F), shown,
           {.size = TextSize::kLarge, .align = Align::kRight, .tone = tone});
   ui.text(inside, wanted ? "Depth (asked for)" : "Depth", {.tone = tone, .lines = 2});
 }
@@ -145,17 +145,6 @@ float main_rows(Ui& ui, PixelBox box, float shown, Editing& edit, TypingState& t
   return box.top - gap;
 }
 
-// What stands between the draft and a saved record, or what will be blank.
-std::string hint(const SurveyView& survey) {
-  if (!survey.missing.empty()) return "Still to say: " + join(survey.missing, "; ");
-  if (!survey.blanks.empty()) {
-    std::string blank = join(survey.blanks, ", ");
-    std::replace(blank.begin(), blank.end(), '_', ' ');
-    return "The plan also asks for " + blank;
-  }
-  return "";
-}
-
 // What is still to be said stands on the button; until then it saves nothing.
 void save_button(Ui& ui, const PixelBox& box, Editing& edit, Sink& sink) {
   const std::vector<std::string>& lacking = edit.survey.missing;
@@ -197,15 +186,16 @@ void main_panel(Ui& ui, PixelBox box, Editing& edit, TypingState& typing, Sink& 
                                         ui.mm(4 * kMostKey_mm + 3 * kGap_mm));
     const PixelBox pad = cut_bottom(&right, pad_height, ui.mm(1));
     const std::string field = edit.on_depth() ? "Depth, cm" : survey.model->plan().finds[edit.state.field];
-    ui.text(right, survey.missing.empty() && !survey.blanks.empty() ? hint(survey) : field,
-            {.size = TextSize::kSmall, .align = Align::kCentre, .tone = Tone::kQuiet, .lines = 3, .shorten = true});
+    ui.text(right, field,
+            {.size = TextSize::kSmall, .align = Align::kCentre, .tone = Tone::kQuiet, .lines = 2, .shorten = true});
     if (const auto key = number_pad(ui, pad)) edit.strike(*key);
     if (ui.take(U'+') && !edit.on_depth()) edit.step(edit.state.field, 1);
     if (ui.take(U'-') && !edit.on_depth()) edit.step(edit.state.field, -1);
     if (!ui.ring_shown() && ui.take(Key::kDown)) edit.choose((edit.state.field + 1) % (edit.finds() + 1));
     if (!ui.ring_shown() && ui.take(Key::kUp)) edit.choose((edit.state.field + edit.finds()) % (edit.finds() + 1));
   }
-  const PixelBox rows = ui.begin_scroll("rows", box, &edit.state.scroll);
+  PixelBox rows = ui.begin_scroll("rows", box, &edit.state.scroll);
+  rows.right -= ui.mm(kGap_mm) / 2;
   ui.end_scroll(main_rows(ui, rows, box.height(), edit, typing));
 }
 

@@ -275,9 +275,11 @@ void Desk::carry_out_one(const DismissNotice&) { view_.notice = {}; }
 // ---- writing ----
 
 void Desk::write(const Action& action, const std::string& label, const std::string& done) {
-  const auto applied = session_->apply({action});
+  const RecordDraft draft = *view_.survey->draft;
+  const auto applied = session_->apply({action}, [&](const SurveyModel& model) { return not_overtaken(draft, model); });
   if (!applied) {
     view_.notice = {NoticeKind::kNotSaved, label + ": " + one_text(applied.error()), {}};
+    others_wrote();
     return;
   }
   view_.notice = {NoticeKind::kSaved, label + done + " at " + when(now(), now()), applied->notes};
@@ -290,6 +292,23 @@ void Desk::write(const Action& action, const std::string& label, const std::stri
   walk_to_ =
       next_stop(session_->model(), view_.survey->order, name ? name->node : kNoNode, view_.survey->grid_pits_first);
   propose();
+}
+
+// Shows what a write that was refused found in the file: somebody else may have recorded the pit since the draft was begun. What is typed stays, as a
+// change of what stands now, and the person looks before anything is written.
+void Desk::others_wrote() {
+  SurveyView& view = *view_.survey;
+  if (session_->revision() == view.revision) return;
+  const bool overtaken = catch_up(&*view.draft, session_->model());
+  survey_changed();
+  if (!overtaken) return;
+  if (const auto name = session_->model().name_of(view.draft->pit)) view.chosen = view.recorded_pit = chosen_pit(*name);
+  if (!keep_drafts()) return;
+  view_.notice = {NoticeKind::kNotSaved,
+                  view.draft->pit +
+                      " was recorded by somebody else since you opened it. What you typed is kept: look at the pit's "
+                      "history, then save yours with the reason, or forget it.",
+                  {}};
 }
 
 void Desk::carry_out_one(const SaveRecord&) {

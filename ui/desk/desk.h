@@ -53,6 +53,7 @@ class Desk {
   bool keep_drafts();
   // One write; on success the record's card closes and the list is shown.
   void write(const Action& action, const std::string& label, const std::string& done);
+  void others_wrote();
   // After anything changed in the survey.
   void survey_changed();
   void figures_if_shown();

@@ -229,7 +229,7 @@ std::string verb_for(const ChosenPit& pit) {
   const bool recorded = pit.mark.mark == Mark::kNegative || pit.mark.mark == Mark::kPositive ||
                         (pit.mark.mark == Mark::kNotDug && !pit.history.empty());
   if (recorded) return "Open record";
-  return pit.mark.mark == Mark::kDue && !pit.mark.asked ? "Record" : "Record as judgement";
+  return pit.mark.mark == Mark::kPlain || pit.mark.asked ? "Record as judgement" : "Record";
 }
 
 // The chosen pit: what it is and what to do with it; touching it shows everything that was written of it.

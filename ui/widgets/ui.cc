@@ -289,7 +289,7 @@ void Ui::mark(MarkShape shape, Pixel middle, float size_px) {
   if (!whole) list_->PopClipRect();
 }
 
-PixelBox Ui::begin_scroll(std::string_view name, const PixelBox& box, ScrollState* state) {
+void Ui::move_by_hand(const PixelBox& box, ScrollState* state) {
   const bool inside = box.shared_with(clip_).contains(input_.pointer);
   if (input_.pressed && inside) {
     *state = {state->offset, state->content, true, false, input_.pointer.y, state->offset};
@@ -302,10 +302,12 @@ PixelBox Ui::begin_scroll(std::string_view name, const PixelBox& box, ScrollStat
   if (state->dragging) state->offset = state->offset_at_hold - (input_.pointer.y - state->held_at);
   if (!input_.down) state->held = state->dragging = false;
   if (inside) state->offset -= input_.wheel * mm(kPrimary_mm);
-  if (inside || scrolls_.empty()) {
-    if (take(Key::kPageDown)) state->offset += box.height() * 0.8F;
-    if (take(Key::kPageUp)) state->offset -= box.height() * 0.8F;
-  }
+  if (take(Key::kPageDown)) state->offset += box.height() * 0.8F;
+  if (take(Key::kPageUp)) state->offset -= box.height() * 0.8F;
+}
+
+PixelBox Ui::begin_scroll(std::string_view name, const PixelBox& box, ScrollState* state, bool by_hand) {
+  if (by_hand) move_by_hand(box, state);
   state->offset = std::round(std::clamp(state->offset, 0.0F, std::max(0.0F, state->content - box.height())));
   log_->widgets.push_back({path_of(name), WidgetKind::kScroll, box, box.shared_with(clip_), 0, "", false, false});
   scrolls_.push_back({box, state, clip_, log_->widgets.size()});

@@ -123,7 +123,8 @@ class Ui {
   void mark(MarkShape shape, Pixel middle, float size_px);
 
   // Content is laid out from the box that is returned, which may reach above and below `box`; end_scroll says where it ended.
-  PixelBox begin_scroll(std::string_view name, const PixelBox& box, ScrollState* state);
+  // Not `by_hand`: only its state moves it.
+  PixelBox begin_scroll(std::string_view name, const PixelBox& box, ScrollState* state, bool by_hand = true);
   void end_scroll(float content_bottom);
 
   Touch touch(std::string_view name, const PixelBox& box, TouchState* state);
@@ -161,6 +162,7 @@ class Ui {
   void draw_lines(const PixelBox& box, const std::vector<std::string>& lines, TextSize size, const TextLook& look);
   std::vector<std::string> wrapped(const std::string& text, float width, TextSize size) const;
   std::string shortened(std::string text, float width, TextSize size) const;
+  void move_by_hand(const PixelBox& box, ScrollState* state);
   void bring_focus_into_view(const Scroll& scroll, float content_bottom);
 
   const Glass& glass_;
