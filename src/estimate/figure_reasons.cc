@@ -10,33 +10,34 @@ struct Verb {
   const char* many;
 };
 
-// "1 pit is", "12 pits are".
-std::string pits(std::size_t count, const Verb& verb) {
-  return std::to_string(count) + (count == 1 ? " pit " : " pits ") + (count == 1 ? verb.one : verb.many);
+// "1 pit is", "12 grid pits are".
+std::string pits(std::size_t count, const std::string& kind, const Verb& verb) {
+  return std::to_string(count) + " " + kind + (count == 1 ? " " : "s ") + (count == 1 ? verb.one : verb.many);
 }
 
 std::string it_or_them(std::size_t count) { return count == 1 ? "it" : "them"; }
 
-std::vector<std::string> reasons_of(const OpenWork& open) {
+// `kind` is "pit" or "grid pit".
+std::vector<std::string> reasons_of(const OpenWork& open, const std::string& kind) {
   const Verb are{"is", "are"};
   const Verb have{"has", "have"};
   std::vector<std::string> reasons;
   if (open.due > 0) {
-    reasons.push_back(pits(open.due, are) + " still to dig: figures count " + it_or_them(open.due) + " as empty");
+    reasons.push_back(pits(open.due, kind, are) + " still to dig: figures count " + it_or_them(open.due) + " as empty");
   }
   if (open.halted > 0) {
-    reasons.push_back(pits(open.halted, are) + " halted: figures count " + it_or_them(open.halted) + " as empty");
+    reasons.push_back(pits(open.halted, kind, are) + " halted: figures count " + it_or_them(open.halted) + " as empty");
   }
   if (open.outcome_conflicts > 0) {
-    reasons.push_back(pits(open.outcome_conflicts, have) + " records that disagree on being positive: settle " +
+    reasons.push_back(pits(open.outcome_conflicts, kind, have) + " records that disagree on being positive: settle " +
                       it_or_them(open.outcome_conflicts));
   }
   if (open.other_conflicts > 0) {
-    reasons.push_back(pits(open.other_conflicts, have) + " more than one record: settle " +
+    reasons.push_back(pits(open.other_conflicts, kind, have) + " more than one record: settle " +
                       it_or_them(open.other_conflicts));
   }
   if (open.refused > 0) {
-    reasons.push_back(pits(open.refused, {"was", "were"}) +
+    reasons.push_back(pits(open.refused, kind, {"was", "were"}) +
                       " refused: holds for that ground only if it is like the rest");
   }
   return reasons;
@@ -78,11 +79,11 @@ FigureStatus figure_status(const Progress& progress, Estimator estimator) {
 
 std::vector<std::string> open_reasons(const OpenWork& everywhere, const OpenWork& first_sample, Estimator estimator) {
   if (estimator != Estimator::kFirstSampleOnly) {
-    std::vector<std::string> reasons = reasons_of(everywhere);
+    std::vector<std::string> reasons = reasons_of(everywhere, "pit");
     if (everywhere.hides_variance()) reasons.push_back("no likely range until all pits are dug and settled");
     return reasons;
   }
-  std::vector<std::string> reasons = reasons_of(first_sample);
+  std::vector<std::string> reasons = reasons_of(first_sample, "grid pit");
   if (first_sample.hides_variance()) {
     reasons.push_back("no likely range until the grid pits are dug and settled");
   } else if (everywhere.any() && !first_sample.any()) {

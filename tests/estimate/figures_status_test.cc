@@ -110,7 +110,8 @@ TEST(FiguresStatus, UnfinishedFirstSampleTakesEveryRange) {
   for (const Estimator estimator : {kHH, kHT, kFirst}) {
     EXPECT_EQ(target(figures, estimator).status, FigureStatus::kProvisional);
     EXPECT_TRUE(has_no_spread(target(figures, estimator)));
-    EXPECT_THAT(target(figures, estimator).why, Contains("2 pits are still to dig: figures count them as empty"));
+    const std::string pits = estimator == kFirst ? "2 grid pits" : "2 pits";
+    EXPECT_THAT(target(figures, estimator).why, Contains(pits + " are still to dig: figures count them as empty"));
   }
   EXPECT_THAT(target(figures, kFirst).why, Contains("no likely range until the grid pits are dug and settled"));
   EXPECT_FALSE(figures.missed_cluster_pits);
@@ -162,7 +163,8 @@ TEST(FiguresStatus, AConflictOverCountsAloneKeepsTheVariance) {
   for (const Estimator estimator : {kHH, kHT, kFirst}) {
     EXPECT_EQ(target(figures, estimator).status, FigureStatus::kProvisional);
     EXPECT_TRUE(target(figures, estimator).range);
-    EXPECT_THAT(target(figures, estimator).why, Contains("1 pit has more than one record: settle it"));
+    const std::string pit = estimator == kFirst ? "1 grid pit" : "1 pit";
+    EXPECT_THAT(target(figures, estimator).why, Contains(pit + " has more than one record: settle it"));
   }
   EXPECT_DOUBLE_EQ(target(figures, kHH).mean_per_pit, 5.0 / 3);  // the later of two positive records
 }
@@ -176,7 +178,7 @@ TEST(FiguresStatus, RefusedPitsKeepTheRangeWithAWarning) {
   EXPECT_THAT(target(figures, kHH).why,
               ElementsAre("2 pits were refused: holds for that ground only if it is like the rest", kLattice));
   EXPECT_THAT(target(figures, kFirst).why,
-              ElementsAre("1 pit was refused: holds for that ground only if it is like the rest", kLattice));
+              ElementsAre("1 grid pit was refused: holds for that ground only if it is like the rest", kLattice));
 }
 
 TEST(FiguresStatus, ClosedAreasCountLikeRecords) {

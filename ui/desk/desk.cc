@@ -149,11 +149,13 @@ bool Desk::keep_drafts() {
   if (view_.survey->draft && typed_anything(*view_.survey->draft, session_->model()))
     all.push_back(*view_.survey->draft);
   const Status kept = draft_file_->write(all);
-  if (!kept) {
+  // Said once, not with every touch: typing and saving go on all the same.
+  if (!kept && !drafts_refused_) {
     view_.notice = {NoticeKind::kSays,
                     "What is half typed can't be kept on this disk (a crash would lose it): " + one_text(kept.error()),
                     {}};
   }
+  drafts_refused_ = !kept;
   return kept.ok();
 }
 

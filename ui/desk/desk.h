@@ -49,7 +49,7 @@ class Desk {
   void keep_preferences();
   void open(const std::string& path);
   void read_drafts();
-  // Keeps what is typed on the disk; false and a notice when that fails.
+  // Keeps what is typed on the disk; false, and a notice the first time, when that fails.
   bool keep_drafts();
   // One write; on success the record's card closes and the list is shown.
   void write(const Action& action, const std::string& label, const std::string& done);
@@ -71,6 +71,7 @@ class Desk {
   std::unique_ptr<Session> session_;
   std::unique_ptr<DraftFile> draft_file_;
   std::map<std::string, RecordDraft> drafts_;  // by label, of pits that were left half written
+  bool drafts_refused_ = false;                // the last time
   NodeId walk_to_ = kNoNode;                   // what the crew is walking to
   DeskView view_;
 };
