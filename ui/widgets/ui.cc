@@ -49,6 +49,9 @@ Ui::Part::Part(Ui* ui, std::string_view name) : ui_(ui), length_(ui->path_.size(
 Ui::Part::~Part() { ui_->path_.resize(length_); }
 
 std::string Ui::path_of(std::string_view name) const { return path_ + std::string(name); }
+std::string Ui::area_path() const {
+  return scrolls_.empty() ? "" : log_->widgets[scrolls_.back().first_widget - 1].path;
+}
 
 Ui::Press Ui::press(std::string_view name, const PixelBox& box, const std::string& label, bool chosen,
                     double least_mm) {
@@ -64,8 +67,8 @@ Ui::Press Ui::press(std::string_view name, const PixelBox& box, const std::strin
     press.acted = press.acted || clicked;
   }
   if (press.acted) ring_->act_on.clear();
-  log_->widgets.push_back(
-      {path, WidgetKind::kButton, box, visible.empty() ? PixelBox{} : visible, least_mm, label, chosen, press.focused});
+  log_->widgets.push_back({path, WidgetKind::kButton, box, visible.empty() ? PixelBox{} : visible, least_mm, label,
+                           chosen, press.focused, area_path()});
   return press;
 }
 
@@ -246,8 +249,8 @@ void Ui::text(const PixelBox& box, const std::string& text, const TextLook& look
   letters.right = letters.left + widest;
   letters.bottom = letters.top + tall;
   const PixelBox visible = letters.shared_with(clip_);
-  log_->texts.push_back(
-      {path_, text, letters, visible.empty() ? PixelBox{} : visible, fonts_->of(size)->FontSize, cut, dots});
+  log_->texts.push_back({path_, text, letters, visible.empty() ? PixelBox{} : visible, fonts_->of(size)->FontSize, cut,
+                         dots, area_path()});
 }
 
 void Ui::map_text(Pixel top_middle, const std::string& text) {
@@ -309,7 +312,8 @@ void Ui::move_by_hand(const PixelBox& box, ScrollState* state) {
 PixelBox Ui::begin_scroll(std::string_view name, const PixelBox& box, ScrollState* state, bool by_hand) {
   if (by_hand) move_by_hand(box, state);
   state->offset = std::round(std::clamp(state->offset, 0.0F, std::max(0.0F, state->content - box.height())));
-  log_->widgets.push_back({path_of(name), WidgetKind::kScroll, box, box.shared_with(clip_), 0, "", false, false});
+  log_->widgets.push_back(
+      {path_of(name), WidgetKind::kScroll, box, box.shared_with(clip_), 0, "", false, false, area_path()});
   scrolls_.push_back({box, state, clip_, log_->widgets.size()});
   // A little more than the box, for outlines and the keyboard's ring.
   clip_ = box.inset(-mm(kRing_mm)).shared_with(clip_);
@@ -350,6 +354,7 @@ Touch Ui::touch(std::string_view name, const PixelBox& box, TouchState* state) {
   const std::string path = path_of(name);
   Touch touch;
   touch.pointer = input_.pointer;
+  if (box.empty()) return touch;
   ImGui::SetCursorScreenPos(corner(box));
   ImGui::InvisibleButton(path.c_str(), {box.width(), box.height()});
   touch.hovered = ImGui::IsItemHovered();
@@ -369,7 +374,7 @@ Touch Ui::touch(std::string_view name, const PixelBox& box, TouchState* state) {
     }
   }
   if (touch.hovered) touch.wheel = input_.wheel;
-  log_->widgets.push_back({path, WidgetKind::kMap, box, box, 0, "", false, false});
+  log_->widgets.push_back({path, WidgetKind::kMap, box, box, 0, "", false, false, area_path()});
   return touch;
 }
 

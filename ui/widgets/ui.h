@@ -155,6 +155,7 @@ class Ui {
   };
 
   std::string path_of(std::string_view name) const;
+  std::string area_path() const;
   Press press(std::string_view name, const PixelBox& box, const std::string& label, bool chosen, double least_mm);
   void face(const PixelBox& box, const Surface& surface, const Press& press, bool outlined);
   Surface surface_of(const ButtonLook& look) const;

@@ -21,6 +21,7 @@ struct WidgetBox {
   std::string label;
   bool chosen = false;
   bool focused = false;
+  std::string area = {};  // path of the scroll area that it was drawn in; "" for none
 };
 
 struct TextBox {
@@ -31,6 +32,7 @@ struct TextBox {
   float size_px = 0;
   bool cut = false;        // the letters don't fit where they should stand
   bool shortened = false;  // a name from outside ends in '…'
+  std::string area = {};
 };
 
 struct WidgetLog {
