@@ -67,6 +67,11 @@ class ScreenDriver {
   // With an OpenGL context that is current.
   void start_gl() { frontend_.start_gl().value(); }
   void stop_gl() { frontend_.stop_gl(); }
+  // One frame more, as when the window was uncovered.
+  void draw_anew() {
+    idle_.changed = true;
+    settle();
+  }
   std::vector<unsigned char> pixels();
 
  private:

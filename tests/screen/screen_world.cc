@@ -69,9 +69,10 @@ void ScreenWorld::put(const std::string& name, const std::string& text) const {
   std::ofstream(path(name), std::ios::binary) << text;
 }
 
-void ScreenWorld::measured(double px_per_mm) const {
+void ScreenWorld::measured(double px_per_mm, bool dusk) const {
   const PreferenceFile file(user_folder_);
   Preferences preferences = file.read();
+  preferences.dusk = dusk;
   preferences.px_per_mm = px_per_mm > 0 ? std::optional(px_per_mm) : std::nullopt;
   file.write(preferences).value();
 }
@@ -100,6 +101,11 @@ const PitRecord* ScreenWorld::record(const Session& session, const std::string& 
   return entry == nullptr || entry->withdrawn() ? nullptr : &entry->record();
 }
 
+void ScreenWorld::apply_elsewhere(const std::string& file, const std::vector<Action>& actions) const {
+  Environment other = environment("other");
+  Session::open(file, other, false).value().apply(actions).value();
+}
+
 void ScreenWorld::write_elsewhere(const std::string& file, const std::string& pit, std::uint32_t found) const {
   Environment other = environment("other");
   Session session = Session::open(file, other, false).value();
@@ -107,9 +113,8 @@ void ScreenWorld::write_elsewhere(const std::string& file, const std::string& pi
   record.pit = pit;
   record.status.emplace(PitStatus::kDug);
   record.counts[0] = found;
-  session
-      .apply({{record, "other crew", session.model().entry(*session.model().name_of(pit)) ? "counted again" : "", {}}})
-      .value();
+  const bool again = session.model().entry(*session.model().name_of(pit)) != nullptr;
+  session.apply({{record, "other crew", again ? "counted again" : "", {}}}).value();
 }
 
 }  // namespace nearpit::ui

@@ -35,7 +35,7 @@ class ScreenWorld {
 
   void put(const std::string& name, const std::string& text) const;
   // The glass was measured on an earlier start; `px_per_mm` of 0: this is the first start of all.
-  void measured(double px_per_mm) const;
+  void measured(double px_per_mm, bool dusk = false) const;
   // The path of a new survey file made from the plan.
   std::string make(const PlanSays& says = {}, const std::string& name = "survey");
 
@@ -45,6 +45,8 @@ class ScreenWorld {
   Session read(const std::string& file);
   // Nothing where no record stands.
   const PitRecord* record(const Session& session, const std::string& pit) const;
+  // Another program writes.
+  void apply_elsewhere(const std::string& file, const std::vector<Action>& actions) const;
   // Another program records so many of the first find.
   void write_elsewhere(const std::string& file, const std::string& pit, std::uint32_t found) const;
 
