@@ -128,7 +128,13 @@ void Desk::read_drafts() {
   bool overtaken = false;
   for (RecordDraft& draft : draft_file_->read()) {
     const auto name = session_->model().name_of(draft.pit);
-    overtaken = catch_up(&draft, session_->model()) || overtaken;
+    if (catch_up(&draft, session_->model())) {
+      // The crash came after it was saved: its record says all of it, and why was said there.
+      RecordDraft rest = draft;
+      rest.why.clear();
+      if (!typed_anything(rest, session_->model())) continue;
+      overtaken = true;
+    }
     // What was being written when the program ended is what the crew stands at.
     if (name && session_->model().survey().dig_list().due(std::max(name->node, 0)) && name->node != kNoNode)
       walk_to_ = name->node;
@@ -417,7 +423,7 @@ void Desk::list_due() {
     row.stop.node = node;
     row.stop.place = model.survey().ground().frame.ground(node);
     row.label = model.label(node);
-    row.because = "asked for: next to a judgement positive";
+    row.because = "asked for by the crew";
     row.half_written = drafts_.contains(row.label);
     view.asked.push_back(std::move(row));
   }

@@ -28,6 +28,7 @@ constexpr double kZoomStep = 1.5;
 constexpr double kWheelStep = 1.2;
 constexpr double kHatch_mm = 3;
 constexpr double kHistory_mm = 40;
+constexpr double kButtons_mm = 4 * kTarget_mm + 5 * kGap_mm;  // the column of four, and what lies above and below it
 
 ImU32 packed(const Colour& colour) { return IM_COL32(colour.red, colour.green, colour.blue, colour.alpha); }
 
@@ -237,7 +238,8 @@ void chosen_panel(Ui& ui, PixelBox* box, const SurveyView& survey, FieldMapState
   const ChosenPit& pit = *survey.chosen;
   const float row_height = ui.mm(kTarget_mm + 2);
   const bool details = state.details && !pit.history.empty();
-  const float history = details ? std::min(ui.mm(kHistory_mm), box->height() * 0.5F) : 0;
+  const float room = box->height() - row_height - ui.mm(kButtons_mm);
+  const float history = details ? std::clamp(room, ui.mm(kTarget_mm), ui.mm(kHistory_mm)) : 0;
   PixelBox panel = cut_bottom(box, row_height + history);
   ui.fill(panel, ui.theme().ground.fill);
   ui.line({panel.left, panel.top}, {panel.right, panel.top}, ui.theme().line, std::max(1.0F, ui.mm(0.4)));
@@ -255,8 +257,10 @@ void chosen_panel(Ui& ui, PixelBox* box, const SurveyView& survey, FieldMapState
     chosen_lines(ui, inside, pit, details ? Tone::kOnChosen : Tone::kOnKey);
   }
   if (!details) return;
-  paged_text(ui, "history-lines", panel.inset(ui.mm(1)), &state.history,
-             [&](const PixelBox& lines) { return history_lines(ui, lines, pit.history); });
+  PixelBox lines = panel.inset(ui.mm(1));
+  lines.top += ui.mm(kGap_mm - 2);
+  paged_text(ui, "history-lines", lines, &state.history,
+             [&](const PixelBox& start) { return history_lines(ui, start, pit.history); });
 }
 
 struct Moves {

@@ -106,15 +106,18 @@ bool Ui::button(std::string_view name, const PixelBox& box, const std::string& l
   inside.left += mm(kTextInset_mm) / 2;
   inside.right -= mm(kTextInset_mm) / 2;
   if (!look.under.empty()) {
+    const float label_height = mm(line_mm(look.size));
+    const float small = mm(line_mm(TextSize::kSmall));
     TextLook under = text_look;
     under.size = TextSize::kSmall;
-    under.lines = 1;
+    under.lines = std::clamp(static_cast<int>((inside.height() - label_height) / small), 1, look.lines);
     text_look.lines = 1;
-    const float both = mm(line_mm(look.size) + line_mm(TextSize::kSmall));
+    const auto wanted = static_cast<int>(wrapped(look.under, inside.width(), TextSize::kSmall).size());
+    const float under_height = small * static_cast<float>(std::min(wanted, under.lines));
     PixelBox lines = inside;
-    lines.top += std::max(0.0F, (inside.height() - both) / 2);
-    text(cut_top(&lines, mm(line_mm(look.size))), label, text_look);
-    text(cut_top(&lines, mm(line_mm(TextSize::kSmall))), look.under, under);
+    lines.top += std::max(0.0F, (inside.height() - label_height - under_height) / 2);
+    text(cut_top(&lines, label_height), label, text_look);
+    text(cut_top(&lines, under_height), look.under, under);
   } else {
     text(inside, label, text_look);
   }
