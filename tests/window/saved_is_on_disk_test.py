@@ -61,6 +61,24 @@ class SavedIsOnDisk(unittest.TestCase):
         self.assertEqual(len(said), PITS)
         self.assertTrue(self.bench.check().json()["whole"])
 
+    def test_killed_between_saving_and_forgetting_the_draft(self):
+        """What such a kill leaves is put there: the record is in the file and its draft is still beside it. Nobody is asked about it."""
+        window = self.window
+        window.start(FILE)
+        first = self.typed(4)
+        drafts = next((self.bench.config / "nearpit").glob("drafts-*"))
+        half_typed = drafts.read_bytes()
+        window.key("Return")
+        self.assertFalse(drafts.exists())
+        window.kill()
+        drafts.write_bytes(half_typed)
+        window.start(FILE)
+        self.assertRegex(window.control("dig-list/record").label, r"^Record T\d-\d$")
+        second = self.typed(5)
+        window.key("Return")
+        window.kill()
+        self.assertEqual(self.in_file(), {first: 4, second: 5})
+
     def test_killed_before_it_says_saved(self):
         seed = random.SystemRandom().randrange(1 << 32)
         print(f"killed before it says saved: seed {seed}")
@@ -76,7 +94,7 @@ class SavedIsOnDisk(unittest.TestCase):
                 window.wait_for(lambda: window.says(f"Saved {pit} at", "strip/"), "Saved")
                 usual = time.monotonic() - begun
             else:
-                time.sleep(chance.uniform(0, 1) * usual)
+                time.sleep(chance.uniform(0, 0.2) * usual)  # the save is in the first of some frames
             window.kill()
             hand.wait()
             found = self.in_file()

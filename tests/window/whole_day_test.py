@@ -132,10 +132,14 @@ class Day(unittest.TestCase):
         if not how:
             self.recorded.append(pit)
 
+    def map_says(self, pit):
+        """The pit that is chosen."""
+        self.assertIn(pit, [text.text for text in self.window.texts if text.path.startswith("map/")], self.window.shown())
+
     def chosen_on_map(self, pit):
         """Taps on the map where the pit lies; the whole survey must be in view."""
         self.window.tap(*self.places.glass(pit, self.map_box, FIT_MARGIN_MM * self.px_per_mm))
-        self.assertIn(pit, self.window.texts_of("map/"), "the pit that was tapped")
+        self.map_says(pit)
 
     def open_on_map(self, pit):
         self.chosen_on_map(pit)
@@ -239,7 +243,7 @@ class Day(unittest.TestCase):
         window.wheel(x, y, 3)
         window.drag(x, y, middle(self.map_box)[0], middle(self.map_box)[1] - 20)
         window.tap(middle(self.map_box)[0], middle(self.map_box)[1] - 20)
-        self.assertIn(pit, window.texts_of("map/"))
+        self.map_says(pit)
         window.click("map/record-chosen")
         self.assertTrue(window.says("recorded: dug, positive", "record/"), window.shown())
         window.key("3")
