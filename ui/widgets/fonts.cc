@@ -132,7 +132,8 @@ void Fonts::paint_marks(ImFontAtlas* atlas, const Theme& theme) {
       for (int row = 0; row < size; ++row) {
         unsigned char* out = pixels + 4 * ((top + row) * width + left);
         for (int column = 0; column < size; ++column, out += 4) {
-          const Colour& colour = mark[static_cast<std::size_t>(row * size + column)];
+          const Colour& colour =
+              mark[static_cast<std::size_t>(row) * static_cast<std::size_t>(size) + static_cast<std::size_t>(column)];
           out[0] = colour.red, out[1] = colour.green, out[2] = colour.blue, out[3] = colour.alpha;
         }
       }
