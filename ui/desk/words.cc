@@ -82,7 +82,7 @@ std::string counted(std::size_t number, const std::string& one, const std::strin
 }
 
 std::string metres(double distance_m) {
-  if (distance_m >= 1000) return format_trimmed(distance_m / 1000, 2) + " km";
+  if (distance_m >= 999.5) return format_trimmed(distance_m / 1000, 2) + " km";
   return format_trimmed(distance_m, distance_m < 10 ? 1 : 0) + " m";
 }
 
