@@ -2,6 +2,7 @@
 
 #include <algorithm>
 #include <cmath>
+#include <map>
 #include <set>
 #include <string>
 #include <vector>
@@ -60,24 +61,60 @@ void progress_sentences(Column& column, const Progress& progress) {
   column.put(progress.complete ? "The plan's digging is done." : open + ".");
 }
 
-// Why rows are not final, each reason once.
-void open_reasons(Column& column, const Figures& figures) {
-  std::vector<std::string> reasons;
-  std::set<std::string> seen;
-  bool final = true;
+// Reasons by what they bear on. Those of a single find stand below its own figure instead.
+struct SharedReasons {
+  std::vector<std::string> of_all;
+  std::vector<std::string> of_clusters;   // only the ways that count the pits next to finds
+  std::vector<std::string> of_grid_pits;  // only the grid pits alone
+  std::set<std::string> all;
+};
+
+SharedReasons shared_reasons(const Figures& figures) {
+  struct Where {
+    std::set<std::string> of;
+    bool clusters = false;
+    bool grid_pits = false;
+  };
+  std::map<std::string, Where> found;
+  std::vector<std::string> order;
+  std::set<std::string> kinds;
   for (const Estimate& estimate : figures.estimates) {
-    final = final && estimate.status == FigureStatus::kFinal;
+    kinds.insert(estimate.of);
     for (const std::string& why : estimate.why) {
-      if (seen.insert(why).second) reasons.push_back(why);
+      if (!found.contains(why)) order.push_back(why);
+      Where& where = found[why];
+      where.of.insert(estimate.of);
+      (estimate.estimator == Estimator::kFirstSampleOnly ? where.grid_pits : where.clusters) = true;
     }
   }
-  if (final && reasons.empty()) {
-    column.put("The figures are final for this plan.");
-    return;
+  SharedReasons shared;
+  for (const std::string& why : order) {
+    const Where& where = found[why];
+    if (where.of.size() == 1 && kinds.size() > 1) continue;
+    shared.all.insert(why);
+    auto& list = where.clusters && where.grid_pits ? shared.of_all
+                 : where.clusters                  ? shared.of_clusters
+                                                   : shared.of_grid_pits;
+    list.push_back(why);
   }
-  column.put(final ? "About the figures:" : "The figures are not final:");
+  return shared;
+}
+
+void reason_lines(Column& column, const std::string& head, const std::vector<std::string>& reasons) {
+  if (reasons.empty()) return;
+  column.put(head);
   for (const std::string& reason : reasons)
-    column.put("\xC2\xB7 " + reason, TextSize::kSmall);
+    column.put("\xC2\xB7 " + reason_in_words(reason), TextSize::kSmall);
+  column.gap(1);
+}
+
+void open_reasons(Column& column, const Figures& figures, const SharedReasons& shared) {
+  const bool final = std::all_of(figures.estimates.begin(), figures.estimates.end(),
+                                 [](const Estimate& estimate) { return estimate.status == FigureStatus::kFinal; });
+  column.put(final ? "The figures are final for this plan." : "The figures are not final.");
+  reason_lines(column, "For all of them:", shared.of_all);
+  reason_lines(column, "With the pits next to finds:", shared.of_clusters);
+  reason_lines(column, "For the grid pits alone:", shared.of_grid_pits);
 }
 
 // The three ways of a figure, in a crew's words.
@@ -116,7 +153,8 @@ std::string sentence(const Estimate& estimate, double pits, double area_m2) {
                      (estimate.per_m2 ? " a pit" : " of " + std::to_string(std::lround(pits)) + " pits");
   if (figures.range) text += likely(*figures.range, 1);
   if (!estimate.per_m2) return text + ".";
-  text += "; " + figure(*estimate.per_m2) + " per m\xC2\xB2; about " + big(estimate.total) + " on the whole ground";
+  text += "; " + figure(*estimate.per_m2) + "\xC2\xA0per\xC2\xA0m\xC2\xB2; about " + big(estimate.total) +
+          " on the whole ground";
   if (estimate.ground.range) text += likely(*estimate.ground.range, area_m2);
   return text + ".";
 }
@@ -143,7 +181,7 @@ void bar(Ui& ui, const PixelBox& box, const Shown& figures, double most) {
 }
 
 void figures_of(Column& column, const std::vector<const Estimate*>& rows, double pits, double area_m2,
-                const std::string& name) {
+                const SharedReasons& shared, const std::string& name) {
   Ui& ui = column.ui;
   column.gap(3);
   column.put(name);
@@ -152,6 +190,7 @@ void figures_of(Column& column, const std::vector<const Estimate*>& rows, double
     const Shown figures = shown(*row, pits);
     most = std::max({most, figures.value, figures.range ? figures.range->upper : 0});
   }
+  most *= 1.04;  // the largest mark stands inside
   if (most <= 0) {
     column.put("none found so far", TextSize::kSmall);
     return;
@@ -163,6 +202,9 @@ void figures_of(Column& column, const std::vector<const Estimate*>& rows, double
     line.left += ui.mm(2);
     line.right -= ui.mm(2);
     bar(ui, line, shown(*row, pits), most);
+    for (const std::string& why : row->why) {
+      if (!shared.all.contains(why)) column.put(reason_in_words(why), TextSize::kSmall, Tone::kQuiet);
+    }
   }
   const PixelBox scale = cut_top(&column.left, ui.mm(line_mm(TextSize::kSmall)));
   ui.text(scale, "0", {.size = TextSize::kSmall, .tone = Tone::kQuiet});
@@ -212,23 +254,24 @@ void day_card(Ui& ui, const PixelBox& box, const SurveyView& survey, DayCardStat
     Column column{ui, start};
     progress_sentences(column, figures.progress);
     column.gap(2);
-    open_reasons(column, figures);
+    const SharedReasons shared = shared_reasons(figures);
+    open_reasons(column, figures, shared);
     column.gap(1);
     std::size_t closed = 0;
     for (const Cluster& cluster : figures.clusters)
       closed += cluster.closed() ? 1u : 0u;
     column.put(figures.clusters.empty() ? "No cluster was met."
                                         : counted(figures.clusters.size(), "cluster", "clusters") + " met, " +
-                                              std::to_string(closed) + " of them dug out.");
+                                              (closed == 0 ? "none" : std::to_string(closed)) + " of them dug out.");
     std::vector<const Estimate*> rows;
     for (const Estimate& estimate : figures.estimates) {
       if (!rows.empty() && rows.front()->of != estimate.of) {
-        figures_of(column, rows, pits, area_m2, title_of(*rows.front(), model));
+        figures_of(column, rows, pits, area_m2, shared, title_of(*rows.front(), model));
         rows.clear();
       }
       rows.push_back(&estimate);
     }
-    if (!rows.empty()) figures_of(column, rows, pits, area_m2, title_of(*rows.front(), model));
+    if (!rows.empty()) figures_of(column, rows, pits, area_m2, shared, title_of(*rows.front(), model));
     missed(column, figures, model.plan().confidence);
     method(column, model.plan().confidence);
     return column.left.top;

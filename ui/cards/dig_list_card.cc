@@ -38,7 +38,8 @@ void due_row(Ui& ui, const PixelBox& box, const DueRow& row, bool chosen, bool a
   const PixelBox mark = cut_left(&inside, ui.mm(kMark_mm), ui.mm(2));
   ui.mark(asked ? MarkShape::kDueAsked : MarkShape::kDue, mark.middle(), ui.mm(kMark_mm));
   const Tone tone = chosen ? Tone::kOnChosen : Tone::kOnKey;
-  const PixelBox label = cut_left(&inside, inside.width() * 0.36F, ui.mm(2));
+  const PixelBox label = cut_left(
+      &inside, std::clamp(ui.text_width(row.label, TextSize::kBase) + 1, ui.mm(22), inside.width() * 0.42F), ui.mm(2));
   if (row.half_written) {
     PixelBox lines = label;
     ui.text(cut_top(&lines, label.height() * 0.55F), row.label, {.tone = tone, .shorten = true});

@@ -12,7 +12,7 @@ float history_lines(Ui& ui, PixelBox box, const std::vector<HistoryLine>& histor
   for (const HistoryLine& line : history) {
     const std::string who = line.by.empty() ? "" : ", " + line.by;
     const std::string why = line.why.empty() ? "" : " (why: " + line.why + ")";
-    put(line.when + who, TextSize::kSmall, Tone::kQuiet);
+    put("written " + line.when + who, TextSize::kSmall, Tone::kQuiet);
     put(line.what + why, TextSize::kSmall, Tone::kPlain);
     box.top += ui.mm(kGap_mm / 2);
   }

@@ -123,7 +123,7 @@ float main_rows(Ui& ui, PixelBox box, float shown, Editing& edit, TypingState& t
   RecordDraft& draft = edit.draft;
   const float gap = ui.mm(kGap_mm);
   // As tall as there is room for, up to a primary target.
-  const auto rows = static_cast<float>((draft.not_dug ? 2 : edit.finds() + 3) + (draft.amends ? 1 : 0));
+  const auto rows = static_cast<float>((draft.not_dug ? 1 : edit.finds() + 2) + (draft.amends ? 1 : 0));
   const float height = std::clamp((shown + gap) / rows - gap, ui.mm(kTarget_mm), ui.mm(kPrimary_mm));
   if (draft.amends && said_row(ui, "why", cut_top(&box, height, gap), "Why changed", draft.why, false))
     open_why(typing, draft);
@@ -140,8 +140,6 @@ float main_rows(Ui& ui, PixelBox box, float shown, Editing& edit, TypingState& t
       edit.state.panel = RecordPanel::kStop;
     }
   }
-  if (said_row(ui, "note", cut_top(&box, height, gap), "Note", draft.note, required(edit.survey, "note")))
-    open_note(typing, draft);
   return box.top - gap;
 }
 
@@ -214,6 +212,15 @@ void head(Ui& ui, PixelBox box, Editing& edit, TypingState& typing, Sink& sink) 
   }
   if (main) {
     if (ui.button("more", cut_right(&box, ui.mm(18), ui.mm(kGap_mm)), "More", {})) state.panel = RecordPanel::kMore;
+    const std::string& note = edit.draft.note;
+    const bool asked_for = required(edit.survey, "note");
+    if (ui.button("note", cut_right(&box, ui.mm(24), ui.mm(kGap_mm)), "Note",
+                  {.under = !note.empty() ? note
+                            : asked_for   ? "asked for"
+                                          : "",
+                   .shorten = true})) {
+      open_note(typing, edit.draft);
+    }
     if (ui.take(U's')) state.panel = RecordPanel::kStop;
     if (ui.take(U't')) open_note(typing, edit.draft);
   }

@@ -66,24 +66,25 @@ void files(Ui& ui, PixelBox box, const FolderList& folder, StartState& state, Si
   ui.text(head, folder.path, {.size = TextSize::kSmall, .lines = 3, .shorten = true});
   if (folder.entries.empty())
     ui.text(cut_top(&box, ui.mm(kTarget_mm)), "Nothing here that this program opens.", {.tone = Tone::kQuiet});
-  paged_list(
-      ui, "files", box, &state.files, folder.entries.size(), ui.mm(kRow_mm),
-      [&](std::size_t index, const PixelBox& row) {
-        const FolderEntry& entry = folder.entries[index];
-        const std::string path = (folder.path == "/" ? "" : folder.path) + "/" + entry.name;
-        const bool plan = !entry.folder && !entry.name.ends_with(".gpkg") && fold_case(entry.name).ends_with(".json");
-        const std::string what = entry.folder ? "folder" : (plan ? "plan, " : "survey, ") + size_in_words(entry.bytes);
-        if (!two_lines(ui, "file-" + entry.name, row, entry.name, what)) return;
-        if (entry.folder) {
-          state.files.offset = 0;
-          sink.send(BrowseFolder{path});
-        } else if (plan) {
-          state.plan = path;
-          state.name = entry.name.substr(0, entry.name.rfind('.'));
-        } else {
-          sink.send(OpenSurvey{path});
-        }
-      });
+  paged_list(ui, "files", box, &state.files, folder.entries.size(), ui.mm(kRow_mm),
+             [&](std::size_t index, const PixelBox& row) {
+               const FolderEntry& entry = folder.entries[index];
+               const std::string path = (folder.path == "/" ? "" : folder.path) + "/" + entry.name;
+               const bool plan =
+                   !entry.folder && !entry.name.ends_with(".gpkg") && fold_case(entry.name).ends_with(".json");
+               const std::string what =
+                   entry.folder ? "folder" : (plan ? "perhaps a plan, " : "survey, ") + size_in_words(entry.bytes);
+               if (!two_lines(ui, "file-" + entry.name, row, entry.name, what)) return;
+               if (entry.folder) {
+                 state.files.offset = 0;
+                 sink.send(BrowseFolder{path});
+               } else if (plan) {
+                 state.plan = path;
+                 state.name = entry.name.substr(0, entry.name.rfind('.'));
+               } else {
+                 sink.send(OpenSurvey{path});
+               }
+             });
 }
 
 void make_from_plan(Ui& ui, PixelBox box, StartState& state, TypingState& typing, Sink& sink) {

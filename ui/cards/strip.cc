@@ -56,7 +56,7 @@ void strip(Ui& ui, const PixelBox& box, const DeskView& desk, bool with_map, boo
       ui.button("map", cut_left(&right, ui.mm(kTab_mm)), *map_shown ? "Card" : "Map", {.chosen = *map_shown}))
     *map_shown = !*map_shown;
   const PixelBox crew = cut_left(&left, left.width() * 0.32F, ui.mm(kGap_mm));
-  if (ui.button("crew", crew, survey.crew.empty() ? "Who is at work?" : survey.crew,
+  if (ui.button("crew", crew, survey.crew.empty() ? "Who is at work?" : "At work: " + survey.crew,
                 {.warning = survey.crew.empty(), .size = TextSize::kSmall, .shorten = true})) {
     sink.send(ShowCard{CardKind::kOffice});
   }

@@ -492,8 +492,12 @@ ChosenPit Desk::chosen_pit(const PitName& name) {
   }
   if (auto past = session_->history(name)) {
     for (auto line = past->rbegin(); line != past->rend(); ++line) {
-      pit.history.push_back(
-          {when(line->at, now()), line->by, record_in_words(line->record, model.plan().finds), line->why});
+      std::string what = record_in_words(line->record, model.plan().finds);
+      // A record may be written long after the pit was dug.
+      const auto dug = parse_time(line->record.dug_at, model.zone());
+      if (dug && !line->record.dug_at_defaulted && line->record.status == PitStatus::kDug)
+        what += "; dug " + (dug->date_only ? format_date(dug->time) : when(in_zone(dug->time, model.zone()), now()));
+      pit.history.push_back({when(line->at, now()), line->by, what, line->why});
     }
   }
   return pit;

@@ -30,6 +30,7 @@ std::string finds_in_words(const PitRecord& record, const std::vector<std::strin
 
 std::string in_words(NotDugReason reason) {
   if (reason == NotDugReason::kStopWork) return "stop-work";
+  if (reason == NotDugReason::kUtility) return "buried line";
   return spaced(word(reason));
 }
 
@@ -110,6 +111,17 @@ std::string because(const SurveyModel& model, const DigStop& stop) {
     names.push_back(std::to_string(more) + " more");
   }
   return names.empty() ? "called for" : "next to " + list_in_words(names);
+}
+
+std::string reason_in_words(const std::string& why) {
+  std::string text = why;
+  const auto replace = [&](std::string_view from, std::string_view to) {
+    for (std::size_t at = text.find(from); at != std::string::npos; at = text.find(from, at + to.size()))
+      text.replace(at, from.size(), to);
+  };
+  replace("per m2", "per m\xC2\xB2");
+  replace("lattice", "grid");
+  return text;
 }
 
 std::string when(const WallTime& time, const WallTime& now) {

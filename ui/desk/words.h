@@ -27,6 +27,8 @@ std::string bearing(double degrees);
 std::string steps_out(std::int32_t ring);
 // "grid pit", "next to T3-4", "next to T3-4 and T3-5".
 std::string because(const SurveyModel& model, const DigStop& stop);
+// A figure's reason as a screen says it.
+std::string reason_in_words(const std::string& why);
 // "14:32" when the day is the same as now's, else "4 May 14:32" (with the year when that differs).
 std::string when(const WallTime& time, const WallTime& now);
 // "dug 45 cm: flaked stone 2, pottery 1; stopped at sterile subsoil", "not dug: slope", "withdrawn".

@@ -139,8 +139,12 @@ void pits(const Map& map, FieldMapState& state) {
     if (!map.survey.marks->has_mark(node)) map.ui.mark(MarkShape::kDot, map.at(map.ground.frame.ground(node)), dot_px);
   }
   map.survey.marks->visible(seen, map.apart_m(), &state.drawn);
-  for (const PitMark& mark : state.drawn)
-    draw_pit_mark(map.ui, mark, map.at(mark.place), map.mark_px);
+  // Positives last, so that nothing covers them.
+  for (const bool positive : {false, true}) {
+    for (const PitMark& mark : state.drawn) {
+      if ((mark.mark == Mark::kPositive) == positive) draw_pit_mark(map.ui, mark, map.at(mark.place), map.mark_px);
+    }
+  }
 }
 
 std::string label_of(const SurveyView& survey, const PitMark& mark) {
@@ -185,6 +189,8 @@ void next_pit(const Map& map) {
   const float thick = std::max(2.0F, map.ui.mm(0.7));
   if (map.survey.walk_from_place)
     map.ui.line(map.at(*map.survey.walk_from_place), middle, map.ui.theme().focus, std::max(1.0F, map.ui.mm(0.3)));
+  // The chosen pit has its ticks already.
+  if (map.survey.chosen && map.survey.chosen->name.node == map.survey.proposed->stop.node) return;
   map.ui.list()->AddCircle({middle.x, middle.y}, std::max(map.mark_px * 0.95F, map.ui.mm(3)),
                            packed(map.ui.theme().focus), 0, thick);
 }
@@ -209,7 +215,7 @@ void scale_and_north(const Map& map) {
   ui.line({x, top + ui.mm(9)}, {x, top}, ink, thick);
   ui.line({x, top}, {x - ui.mm(1.5), top + ui.mm(3)}, ink, thick);
   ui.line({x, top}, {x + ui.mm(1.5), top + ui.mm(3)}, ink, thick);
-  ui.text({x + ui.mm(2), top, x + ui.mm(26), top + ui.mm(5)}, "grid north",
+  ui.text({x + ui.mm(3), top, x + ui.mm(26), top + ui.mm(5)}, "grid north",
           {.size = TextSize::kSmall, .tone = Tone::kOnMap});
 }
 
@@ -222,7 +228,7 @@ void chosen_lines(Ui& ui, PixelBox box, const ChosenPit& pit, Tone tone) {
   std::string second;
   for (const std::string& why : pit.why)
     second += (second.empty() ? "" : ", ") + why;
-  if (second.empty() && !pit.history.empty()) second = pit.history.front().when + ": " + pit.history.front().what;
+  if (second.empty() && !pit.history.empty()) second = pit.history.front().what;
   ui.text(box, second, {.size = TextSize::kSmall, .tone = tone, .shorten = true});
 }
 
@@ -244,8 +250,11 @@ void chosen_panel(Ui& ui, PixelBox* box, const SurveyView& survey, FieldMapState
   ui.fill(panel, ui.theme().ground.fill);
   ui.line({panel.left, panel.top}, {panel.right, panel.top}, ui.theme().line, std::max(1.0F, ui.mm(0.4)));
   PixelBox row = cut_top(&panel, row_height).inset(ui.mm(1));
-  if (ui.button("record-chosen", cut_right(&row, ui.mm(27), ui.mm(kGap_mm)), verb_for(pit), {.size = TextSize::kSmall}))
+  const bool open_already = survey.draft && survey.draft->pit == pit.name.label;
+  if (!open_already && ui.button("record-chosen", cut_right(&row, ui.mm(27), ui.mm(kGap_mm)), verb_for(pit),
+                                 {.size = TextSize::kSmall})) {
     sink.send(OpenRecord{pit.name.label});
+  }
   if (pit.history.empty()) {
     chosen_lines(ui, row, pit, Tone::kPlain);
   } else {
@@ -292,6 +301,14 @@ void buttons_and_keys(Ui& ui, const PixelBox& box, Moves* moves) {
   if (ui.take(Key::kDown)) moves->y = -step;
 }
 
+// All of the survey, left of the column of buttons.
+MapView whole_survey(const Ui& ui, const Box& ground, const PixelBox& box) {
+  PixelBox free = box;
+  free.right -= ui.mm(kTarget_mm + 2);
+  const MapView view = fitted(ground, free, ui.mm(kFitMargin_mm));
+  return panned(view, free.middle().x - box.middle().x, free.middle().y - box.middle().y);
+}
+
 }  // namespace
 
 void draw_pit_mark(Ui& ui, const PitMark& mark, Pixel middle, float size_px) {
@@ -308,7 +325,7 @@ void field_map(Ui& ui, const PixelBox& box, const SurveyView& survey, FieldMapSt
   PixelBox map_box = box;
   if (!state.view || state.of != survey.file || state.box != box) {
     const bool same = state.view && state.of == survey.file;
-    if (!same) state.view = fitted(whole, box, ui.mm(kFitMargin_mm));
+    if (!same) state.view = whole_survey(ui, whole, box);
     state.of = survey.file;
     state.box = box;
   }
@@ -339,7 +356,7 @@ void field_map(Ui& ui, const PixelBox& box, const SurveyView& survey, FieldMapSt
   MapView next = panned(*state.view, touch.drag_x + moves.x, touch.drag_y + moves.y);
   if (touch.wheel != 0) next = zoomed(next, box, touch.pointer, std::pow(kWheelStep, touch.wheel), limits);
   if (moves.zoom != 1) next = zoomed(next, box, map_box.middle(), moves.zoom, limits);
-  if (moves.fit) next = fitted(whole, box, ui.mm(kFitMargin_mm));
+  if (moves.fit) next = whole_survey(ui, whole, box);
   if (moves.to_next && survey.proposed) {
     next.centre = survey.proposed->stop.place;
     next = panned(next, map_box.middle().x - box.middle().x, map_box.middle().y - box.middle().y);

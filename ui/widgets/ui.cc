@@ -103,7 +103,7 @@ bool Ui::button(std::string_view name, const PixelBox& box, const std::string& l
     text_look.tone = Tone::kPlain;
   }
   PixelBox inside = box.inset(mm(kTextInset_mm) / 2);
-  inside.left += mm(kTextInset_mm) / 2;
+  inside.left += mm(look.align == Align::kLeft ? 2 * kTextInset_mm : kTextInset_mm) / 2;
   inside.right -= mm(kTextInset_mm) / 2;
   if (!look.under.empty()) {
     const float label_height = mm(line_mm(look.size));
