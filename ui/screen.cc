@@ -15,6 +15,7 @@ constexpr double kLeastCard_mm = 122;
 constexpr double kMostCard_mm = 160;
 constexpr double kLeastMap_mm = 60;
 constexpr double kLeastHeight_mm = 124;
+constexpr double kSecondRow_mm = kTarget_mm + kGap_mm;  // of the strip, on a narrow glass
 
 void typed_for(const TypingState& typing, TypingAnswer answer, const DeskView& desk, ScreenState& state, Sink& sink) {
   const std::string& text = typing.line.text;
@@ -132,10 +133,18 @@ void keys_of_the_screen(Ui& ui, const DeskView& desk, Sink& sink) {
   }
 }
 
+// Too narrow for map and card side by side.
+bool is_narrow(const Ui& ui, const PixelBox& box) { return ui.glass().mm(box.width()) < kLeastCard_mm + kLeastMap_mm; }
+
 void survey_screen(Ui& ui, PixelBox box, const DeskView& desk, ScreenState& state, Sink& sink) {
-  const PixelBox foot = cut_bottom(&box, ui.mm(kTarget_mm), ui.mm(kGap_mm));
   const double wide_mm = ui.glass().mm(box.width());
-  const bool narrow = wide_mm < kLeastCard_mm + kLeastMap_mm;
+  const bool narrow = is_narrow(ui, box);
+  const PixelBox foot = cut_bottom(&box, ui.mm(kTarget_mm + (narrow ? kSecondRow_mm : 0)), ui.mm(kGap_mm));
+  // Another card, or something to be read, comes in front of the map.
+  const std::string showing =
+      std::to_string(static_cast<int>(desk.card)) + (desk.survey->draft ? desk.survey->draft->pit : "");
+  if (showing != state.showing || desk.notice.to_be_read()) state.map_shown = false;
+  state.showing = showing;
   if (narrow) {
     if (!state.map_shown) card(ui, box, desk, state, sink);
   } else {
@@ -164,25 +173,29 @@ void what_is_shown(Ui& ui, const PixelBox& box, const DeskView& desk, ScreenStat
   }
 }
 
+void whole_up_and_down(Ui& ui, PixelBox box, float step, ScrollState* whole) {
+  const Ui::Part part = ui.part("whole");
+  const PixelBox up = cut_top(&box, (box.height() - ui.mm(kGap_mm)) / 2, ui.mm(kGap_mm));
+  if (ui.button("up", up, "\xE2\x86\x91")) whole->offset -= step;
+  if (ui.button("down", box, "\xE2\x86\x93")) whole->offset += step;
+}
+
 }  // namespace
 
 void draw_screen(Ui& ui, const DeskView& desk, ScreenState& state, Sink& sink) {
   PixelBox box = ui.window();
   box = {box.left + ui.mm(kSide_mm), box.top + ui.mm(kMargin_mm), box.right - ui.mm(kSide_mm),
          box.bottom - ui.mm(kMargin_mm)};
-  if (box.height() >= ui.mm(kLeastHeight_mm)) {
+  const float least = ui.mm(kLeastHeight_mm + (is_narrow(ui, box) ? kSecondRow_mm : 0));
+  if (box.height() >= least) {
     what_is_shown(ui, box, desk, state, sink);
     return;
   }
   // Too low for what must stand on it: drawn at the least height, with buttons to move it up and down.
   PixelBox buttons = cut_right(&box, ui.mm(kTarget_mm), ui.mm(kGap_mm));
-  const Ui::Part part = ui.part("whole");
-  const float step = box.height() * 0.6F;
-  if (ui.button("up", cut_top(&buttons, (buttons.height() - ui.mm(kGap_mm)) / 2, ui.mm(kGap_mm)), "\xE2\x86\x91"))
-    state.whole.offset -= step;
-  if (ui.button("down", buttons, "\xE2\x86\x93")) state.whole.offset += step;
-  PixelBox content = ui.begin_scroll("glass", box, &state.whole, false);
-  content.bottom = content.top + ui.mm(kLeastHeight_mm);
+  whole_up_and_down(ui, buttons, box.height() * 0.6F, &state.whole);
+  PixelBox content = ui.begin_scroll("whole", box, &state.whole, false);
+  content.bottom = content.top + least;
   what_is_shown(ui, content, desk, state, sink);
   ui.end_scroll(content.bottom);
 }

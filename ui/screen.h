@@ -31,6 +31,7 @@ struct ScreenState {
   ScrollState notice;
   ScrollState whole;       // on a glass too low for a card
   bool map_shown = false;  // on a glass too narrow for map and card: the map is shown
+  std::string showing;     // which card, of which pit
 };
 
 void draw_screen(Ui& ui, const DeskView& desk, ScreenState& state, Sink& sink);

@@ -47,8 +47,8 @@ void recent_surveys(Ui& ui, PixelBox box, const DeskView& desk, StartState& stat
 }
 
 void places(Ui& ui, PixelBox box, const DeskView& desk, Sink& sink) {
-  ui.text(cut_top(&box, ui.mm(line_mm(TextSize::kBase)), ui.mm(kGap_mm)),
-          "Look for a survey file (.gpkg), or a plan (.json) to make one from", {.shorten = true});
+  const std::string what = "Look for a survey file (.gpkg), or a plan (.json) to make one from";
+  ui.text(cut_top(&box, ui.text_height(what, box.width(), TextSize::kBase), ui.mm(kGap_mm)), what, {.lines = 2});
   for (std::size_t i = 0; i < desk.places.size() && box.height() >= ui.mm(kTarget_mm); ++i) {
     if (ui.button("place-" + std::to_string(i), cut_top(&box, ui.mm(kTarget_mm), ui.mm(kGap_mm)), desk.places[i].name,
                   {.align = Align::kLeft, .under = desk.places[i].path, .shorten = true})) {

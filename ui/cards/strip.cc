@@ -41,21 +41,22 @@ void strip(Ui& ui, const PixelBox& box, const DeskView& desk, bool with_map, boo
   const Ui::Part part = ui.part("strip");
   const SurveyView& survey = *desk.survey;
   PixelBox left = box;
+  const float gap = ui.mm(kGap_mm);
   const auto tabs = static_cast<float>(kTabs.size() + (with_map ? 1u : 0u));
-  PixelBox right = cut_right(&left, tabs * ui.mm(kTab_mm) + (tabs - 1) * ui.mm(kGap_mm), ui.mm(kGap_mm));
+  PixelBox right = with_map ? cut_bottom(&left, ui.mm(kTarget_mm), gap)
+                            : cut_right(&left, tabs * ui.mm(kTab_mm) + (tabs - 1) * gap, gap);
+  const float tab_width = (right.width() - (tabs - 1) * gap) / tabs;
   for (const Tab& tab : kTabs) {
     const bool chosen = desk.card == tab.card;
     const bool asked =
-        ui.button(tab.name, cut_left(&right, ui.mm(kTab_mm), ui.mm(kGap_mm)), tab.label, {.chosen = chosen}) ||
-        ui.take(tab.key);
+        ui.button(tab.name, cut_left(&right, tab_width, gap), tab.label, {.chosen = chosen}) || ui.take(tab.key);
     if (!asked) continue;
     *map_shown = false;
     sink.send(ShowCard{tab.card});
   }
-  if (with_map &&
-      ui.button("map", cut_left(&right, ui.mm(kTab_mm)), *map_shown ? "Card" : "Map", {.chosen = *map_shown}))
+  if (with_map && ui.button("map", cut_left(&right, tab_width), *map_shown ? "Card" : "Map", {.chosen = *map_shown}))
     *map_shown = !*map_shown;
-  const PixelBox crew = cut_left(&left, left.width() * 0.32F, ui.mm(kGap_mm));
+  const PixelBox crew = cut_left(&left, left.width() * 0.32F, gap);
   if (ui.button("crew", crew, survey.crew.empty() ? "Who is at work?" : "At work: " + survey.crew,
                 {.warning = survey.crew.empty(), .size = TextSize::kSmall, .shorten = true})) {
     sink.send(ShowCard{CardKind::kOffice});

@@ -7,7 +7,7 @@
 
 namespace nearpit::ui {
 
-// `with_map`: the glass is too narrow for both, and a button shows the map or the card.
+// `with_map`: the glass is too narrow for both, a button shows the map or the card, and the strip is two rows high.
 void strip(Ui& ui, const PixelBox& box, const DeskView& desk, bool with_map, bool* map_shown, Sink& sink);
 
 }  // namespace nearpit::ui

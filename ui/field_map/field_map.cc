@@ -28,6 +28,7 @@ constexpr double kZoomStep = 1.5;
 constexpr double kWheelStep = 1.2;
 constexpr double kHatch_mm = 3;
 constexpr double kHistory_mm = 40;
+constexpr double kSideBySide_mm = 80;
 constexpr double kButtons_mm = 4 * kTarget_mm + 5 * kGap_mm;  // the column of four, and what lies above and below it
 
 ImU32 packed(const Colour& colour) { return IM_COL32(colour.red, colour.green, colour.blue, colour.alpha); }
@@ -242,18 +243,22 @@ std::string verb_for(const ChosenPit& pit) {
 // The chosen pit: what it is and what to do with it; touching it shows everything that was written of it.
 void chosen_panel(Ui& ui, PixelBox* box, const SurveyView& survey, FieldMapState& state, Sink& sink) {
   const ChosenPit& pit = *survey.chosen;
-  const float row_height = ui.mm(kTarget_mm + 2);
   const bool details = state.details && !pit.history.empty();
+  const bool narrow = box->width() < ui.mm(kSideBySide_mm);
+  // On a narrow map the button stands under what the pit is, and its history takes the room of both.
+  const bool openable = !(survey.draft && survey.draft->pit == pit.name.label) && !(narrow && details);
+  const float row_height = ui.mm(kTarget_mm + 2 + (narrow && openable ? kTarget_mm + kGap_mm : 0));
   const float room = box->height() - row_height - ui.mm(kButtons_mm);
   const float history = details ? std::clamp(room, ui.mm(kTarget_mm), ui.mm(kHistory_mm)) : 0;
   PixelBox panel = cut_bottom(box, row_height + history);
   ui.fill(panel, ui.theme().ground.fill);
   ui.line({panel.left, panel.top}, {panel.right, panel.top}, ui.theme().line, std::max(1.0F, ui.mm(0.4)));
   PixelBox row = cut_top(&panel, row_height).inset(ui.mm(1));
-  const bool open_already = survey.draft && survey.draft->pit == pit.name.label;
-  if (!open_already && ui.button("record-chosen", cut_right(&row, ui.mm(27), ui.mm(kGap_mm)), verb_for(pit),
-                                 {.size = TextSize::kSmall})) {
-    sink.send(OpenRecord{pit.name.label});
+  if (openable) {
+    const float gap = ui.mm(kGap_mm);
+    const PixelBox button = narrow ? cut_bottom(&row, ui.mm(kTarget_mm), gap) : cut_right(&row, ui.mm(27), gap);
+    if (ui.button("record-chosen", button, verb_for(pit), {.size = TextSize::kSmall}))
+      sink.send(OpenRecord{pit.name.label});
   }
   if (pit.history.empty()) {
     chosen_lines(ui, row, pit, Tone::kPlain);
