@@ -94,6 +94,7 @@ class Tour {
   void measure(const ScreenWorld& world) const { world.measured(glass_.px_per_mm(), dusk_); }
   void see(ScreenDriver& screen, const std::string& card) { guest_.sees(screen, card); }
   static void choose_on_map(ScreenDriver& screen, const std::string& label) {
+    if (screen.shows("strip/map") && !screen.widget("strip/map").chosen) screen.tap("strip/map");
     const SurveyModel& model = *screen.view().survey->model;
     const Point place = model.survey().ground().frame.ground(model.name_of(label)->node);
     screen.tap_at(to_screen(screen.map_view(), screen.map_box(), place));

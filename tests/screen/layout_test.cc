@@ -27,6 +27,9 @@ class LayoutGuest : public TourGuest {
     for (const std::string& area : areas)
       page_through(screen, area, &said);
     for (const std::string& line : said) {
+      // Ten keys of 12 mm and what lies between them take 147 mm.
+      const bool narrow = screen.glass().mm(screen.glass().width_px) < 150;
+      if (narrow && line.starts_with("typing/letters/") && line.find("only 11.") != std::string::npos) continue;
       if (told_.insert(card + line).second) complaints += card + " | " + line + "\n";
     }
   }
@@ -45,11 +48,17 @@ class LayoutGuest : public TourGuest {
     std::string before;
     for (std::string now = widget_lines(screen.log()); now != before; now = widget_lines(screen.log())) {
       before = now;
-      screen.wheel(box.middle(), -page);
+      if (area == "whole") {
+        screen.tap("whole/down");
+      } else {
+        screen.wheel(box.middle(), -page);
+      }
       add(layout_faults(screen.log(), screen.glass()), said);
     }
     add(layout_faults(screen.log(), screen.glass(), area), said);
     screen.wheel(box.middle(), 1e6F);
+    for (int i = 0; i < 4 && area == "whole"; ++i)
+      screen.tap("whole/up");
   }
 
   std::set<std::string> told_;
@@ -68,11 +77,14 @@ std::string case_name(const testing::TestParamInfo<LayoutCase>& info) {
 
 std::vector<LayoutCase> cases() {
   std::vector<LayoutCase> all;
-  for (const TestGlass glass : {TestGlass{1280, 800, 1}, TestGlass{1280, 800, 1.5}, TestGlass{1024, 600, 1},
-                                TestGlass{1024, 600, 1.25}, TestGlass{1920, 1080, 1}, TestGlass{1920, 1080, 2}}) {
-    all.push_back({glass, false});
-    all.push_back({glass, true});
+  for (const bool dusk : {false, true}) {
+    for (const TestGlass glass : {TestGlass{1280, 800, 1}, TestGlass{1280, 800, 1.5}, TestGlass{1024, 600, 1},
+                                  TestGlass{1024, 600, 1.25}, TestGlass{1920, 1080, 1}, TestGlass{1920, 1080, 2}})
+      all.push_back({glass, dusk});
   }
+  // Upright; as low as a card may be; too low for a card.
+  for (const TestGlass glass : {TestGlass{800, 1280, 1.5}, TestGlass{800, 480, 1}, TestGlass{1920, 1080, 2.5}})
+    all.push_back({glass, false});
   return all;
 }
 

@@ -30,17 +30,6 @@ bool whole(const WidgetBox& widget) {
          widget.visible.width() > widget.box.width() - 1;
 }
 
-// The scroll area that the control was drawn in: the last one before it that reaches over it sideways.
-const WidgetBox* area_of(const WidgetLog& log, const WidgetBox& widget) {
-  const WidgetBox* area = nullptr;
-  for (const WidgetBox& one : log.widgets) {
-    if (&one == &widget) return area;
-    const float middle = widget.box.middle().x;
-    if (one.kind == WidgetKind::kScroll && one.box.left <= middle && middle <= one.box.right) area = &one;
-  }
-  return area;
-}
-
 }  // namespace
 
 ScreenDriver::ScreenDriver(const ScreenWorld& world, const TestGlass& glass, const std::string& file)
@@ -199,15 +188,27 @@ bool ScreenDriver::look_for(const std::string& path) {
   return false;
 }
 
+// Moves the whole of a glass that is too low by its own buttons.
+bool ScreenDriver::move_whole(float towards_y) {
+  if (!shows("whole/up")) return false;
+  const std::string before = widget_lines(log());
+  tap_at(middle_of(towards_y < glass_.height_px / 2 ? "whole/up" : "whole/down"));
+  return widget_lines(log()) != before;
+}
+
 void ScreenDriver::bring_into_view(const std::string& path) {
   if (!shows(path) && !look_for(path)) widget(path);
   for (int i = 0; i < kMostDrags; ++i) {
     const WidgetBox one = widget(path);
-    if (whole(one)) return;
-    const WidgetBox* area = area_of(log(), widget(path));
-    if (area == nullptr) return;
-    const float by = one.box.top < area->box.top ? area->box.top - one.box.top : area->box.bottom - one.box.bottom;
-    if (!drag_area(area->path, by)) return;
+    if (whole(one) || one.area.empty()) return;
+    const WidgetBox area = widget(one.area);
+    bool moved = false;
+    if (one.area != "whole" && !area.visible.empty()) {
+      const PixelBox& room = area.visible;
+      const float by = one.box.top < room.top ? room.top - one.box.top : room.bottom - one.box.bottom;
+      moved = drag_area(one.area, by);
+    }
+    if (!moved && !move_whole(one.box.middle().y)) return;
   }
 }
 

@@ -79,6 +79,7 @@ class ScreenDriver {
   void bring_into_view(const std::string& path);
   bool look_for(const std::string& path);
   bool drag_area(const std::string& area, float by);
+  bool move_whole(float towards_y);
   std::string on_the_glass() const;
 
   Environment environment_;

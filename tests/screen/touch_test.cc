@@ -202,6 +202,34 @@ TEST_F(Touch, TheMapStaysWhereItWasWhenOtherCardsCome) {
   EXPECT_EQ(screen.map_view().centre.y, before.centre.y);
 }
 
+// ---- glasses that are too small ----
+
+TEST_F(Touch, OnANarrowGlassMapAndCardTakeTurns) {
+  const std::string file = world.make();
+  ScreenDriver screen(world, {800, 1280, 1.5}, file);
+  EXPECT_TRUE(screen.shows("dig-list/record"));
+  EXPECT_FALSE(screen.shows("map/ground"));
+  screen.tap("strip/map");
+  EXPECT_TRUE(screen.shows("map/ground"));
+  EXPECT_FALSE(screen.shows("dig-list/record"));
+  screen.tap_at(on_map(screen, {25, 25}));
+  screen.tap("map/record-chosen");
+  EXPECT_TRUE(screen.shows("record/save")) << "the record comes in front of the map";
+  screen.tap_all({"record/nothing-found", "record/save", "strip/map", "strip/map"});
+  EXPECT_TRUE(screen.shows("dig-list/record"));
+  EXPECT_NE(world.record(world.read(file), "T3-3"), nullptr);
+}
+
+TEST_F(Touch, OnAGlassThatIsTooLowEverythingIsReachedByItsButtons) {
+  const std::string file = world.make();
+  world.measured(TestGlass{1920, 1080, 2.5}.px_per_mm());
+  ScreenDriver screen(world, {1920, 1080, 2.5}, file);
+  ASSERT_TRUE(screen.shows("whole/down"));
+  screen.tap_all({"dig-list/record", "record/nothing-found", "record/save", "strip/day", "strip/dig-list"});
+  EXPECT_NE(world.record(world.read(file), "T1-1"), nullptr);
+  EXPECT_EQ(screen.widget("dig-list/record").label, "Record T3-3");
+}
+
 TEST_F(Touch, NoFrameIsDrawnWhenNothingComesIn) {
   ScreenDriver screen(world, {}, world.make());
   const int before = screen.frames();
