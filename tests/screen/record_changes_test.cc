@@ -212,13 +212,13 @@ TEST_F(RecordChanges, TheCrewIsChosenByTouchFromThePlanOrTypedAndStandsInTheReco
     ScreenDriver screen(world, {}, file);
     EXPECT_THAT(screen.widget("strip/crew").label, HasSubstr("Who"));
     screen.tap_all({"strip/crew", "office/crew-1"});
-    EXPECT_EQ(screen.widget("strip/crew").label, "B");
+    EXPECT_THAT(screen.widget("strip/crew").label, testing::EndsWith("B"));
     screen.tap("strip/dig-list");
     record_negative(screen);
     EXPECT_EQ(world.record(world.read(file), "T1-1")->crew, "B");
   }
   ScreenDriver again(world, {}, file);
-  EXPECT_EQ(again.widget("strip/crew").label, "B") << "who was at work last is remembered";
+  EXPECT_THAT(again.widget("strip/crew").label, testing::EndsWith("B")) << "who was at work last is remembered";
 }
 
 TEST_F(RecordChanges, ACrewNameIsTypedWhereThePlanNamesNone) {
@@ -227,7 +227,7 @@ TEST_F(RecordChanges, ACrewNameIsTypedWhereThePlanNamesNone) {
   screen.tap_all({"strip/crew", "office/crew-name"});
   screen.type("Ngaio");
   screen.tap_all({"typing/done", "strip/dig-list"});
-  EXPECT_EQ(screen.widget("strip/crew").label, "Ngaio");
+  EXPECT_THAT(screen.widget("strip/crew").label, testing::EndsWith("Ngaio"));
   record_negative(screen);
   EXPECT_EQ(world.record(world.read(file), "T1-1")->crew, "Ngaio");
 }
