@@ -3,13 +3,11 @@
 #ifndef NEARPIT_UI_IDLE_POLICY_H_
 #define NEARPIT_UI_IDLE_POLICY_H_
 
-#include <cstdint>
 #include <optional>
 
-namespace nearpit::ui {
+#include "widgets/input_queue.h"
 
-// Milliseconds of a clock that never goes back.
-using Milliseconds = std::int64_t;
+namespace nearpit::ui {
 
 struct IdleState {
   bool input_waits = false;              // events that no frame has taken yet

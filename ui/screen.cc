@@ -22,28 +22,24 @@ void typed_for(const TypingState& typing, TypingAnswer answer, const DeskView& d
   const bool done = answer == TypingAnswer::kDone;
   switch (typing.what) {
     case TypingFor::kNote:
-    case TypingFor::kWhyChanged: {
-      // Kept with every letter, so that a crash loses none.
+    case TypingFor::kWhyChanged:
+    case TypingFor::kWhyMoved:
+    case TypingFor::kWhyWithdrawn:
+    case TypingFor::kWhyNeighbours: {
+      // Kept with every letter, so that a crash or a refusal loses none.
       if (!desk.survey || !desk.survey->draft) return;
       RecordDraft draft = *desk.survey->draft;
       (typing.what == TypingFor::kNote ? draft.note : draft.why) = text;
       sink.send(KeepDraft{draft});
+      if (done && typing.what == TypingFor::kWhyWithdrawn) sink.send(WithdrawRecord{text});
+      if (done && typing.what == TypingFor::kWhyNeighbours) sink.send(OpenNeighbours{text});
       return;
     }
-    case TypingFor::kWhyWithdrawn:
-      if (done && !text.empty()) sink.send(WithdrawRecord{text});
-      return;
-    case TypingFor::kWhyNeighbours:
-      if (done && !text.empty()) sink.send(OpenNeighbours{text});
-      return;
     case TypingFor::kMoveTo:
       if (done) {
         state.record.move_to = text;
         sink.send(ChoosePit{text});
       }
-      return;
-    case TypingFor::kWhyMoved:
-      if (done) state.record.move_why = text;
       return;
     case TypingFor::kCrew:
       if (done) sink.send(SetCrew{text});
@@ -60,13 +56,17 @@ void typing_over_all(Ui& ui, const PixelBox& box, const DeskView& desk, ScreenSt
   const TypingAnswer answer = typing_card(ui, box, state.typing);
   if (answer == TypingAnswer::kNone) return;
   typed_for(state.typing, answer, desk, state, sink);
-  if (answer == TypingAnswer::kDone || answer == TypingAnswer::kLeft) state.typing = {};
+  if (answer != TypingAnswer::kChanged) state.typing = {};
 }
 
 // What must be read stands over the card until somebody says that it was.
 void notice_card(Ui& ui, PixelBox box, const Notice& notice, ScreenState& state, Sink& sink) {
   const Ui::Part part = ui.part("notice");
   const bool bad = notice.kind != NoticeKind::kSaved;
+  if (state.notice_read != notice.text) {
+    state.notice = {};  // another one: from its top
+    state.notice_read = notice.text;
+  }
   PixelBox head = cut_top(&box, ui.mm(kTarget_mm), ui.mm(kGap_mm));
   const Surface& surface = bad ? ui.theme().warning : ui.theme().good;
   ui.fill(head, surface.fill, 1);
@@ -77,8 +77,7 @@ void notice_card(Ui& ui, PixelBox box, const Notice& notice, ScreenState& state,
   const PixelBox foot = cut_bottom(&box, ui.mm(kPrimary_mm), ui.mm(kGap_mm));
   if (ui.button("understood", foot,
                 notice.kind == NoticeKind::kNotSaved ? "Back to the record; nothing typed is lost" : "I have read this",
-                {.kind = ButtonKind::kPrimary, .least_mm = kPrimary_mm}) ||
-      ui.take(Key::kEnter) || ui.take(Key::kEscape)) {
+                {.kind = ButtonKind::kPrimary, .least_mm = kPrimary_mm})) {
     sink.send(DismissNotice{});
   }
   paged_text(ui, "text", box, &state.notice, [&](PixelBox lines) {
@@ -122,8 +121,9 @@ void card(Ui& ui, const PixelBox& box, const DeskView& desk, ScreenState& state,
 }
 
 void keys_of_the_screen(Ui& ui, const DeskView& desk, Sink& sink) {
+  if (desk.notice.to_be_read()) return;
   if (ui.take(U'?')) sink.send(ShowCard{CardKind::kKeys});
-  if (!desk.survey || desk.notice.to_be_read()) return;
+  if (!desk.survey) return;
   const SurveyView& survey = *desk.survey;
   if (desk.card == CardKind::kDigList) {
     if (survey.proposed && (ui.take(U'r') || ui.take(Key::kEnter))) sink.send(OpenRecord{survey.proposed->label});
@@ -160,8 +160,9 @@ void what_is_shown(Ui& ui, const PixelBox& box, const DeskView& desk, ScreenStat
   if (state.typing.what != TypingFor::kNothing) {
     typing_over_all(ui, box, desk, state, sink);
   } else if (desk.card == CardKind::kSizes) {
-    sizes_card(ui, box, state.sizes, sink);
+    sizes_card(ui, box, desk.survey.has_value(), state.sizes, sink);
   } else if (desk.survey) {
+    state.start.plan.clear();
     survey_screen(ui, box, desk, state, sink);
   } else if (desk.notice.to_be_read()) {
     notice_card(ui, box, desk.notice, state, sink);
@@ -181,6 +182,17 @@ void whole_up_and_down(Ui& ui, PixelBox box, float step, ScrollState* whole) {
 }
 
 }  // namespace
+
+std::string under_the_finger(const DeskView& desk, const ScreenState& state) {
+  std::string what = std::to_string(static_cast<int>(desk.card)) + "/" +
+                     std::to_string(static_cast<int>(state.typing.what)) + "/" +
+                     std::to_string(desk.notice.to_be_read());
+  if (desk.survey) {
+    what += "/" + std::to_string(desk.survey->opened);
+    if (desk.card == CardKind::kRecord) what += "/" + std::to_string(static_cast<int>(state.record.panel));
+  }
+  return what + "/" + state.start.plan + "/" + (desk.folder ? desk.folder->path : "");
+}
 
 void draw_screen(Ui& ui, const DeskView& desk, ScreenState& state, Sink& sink) {
   PixelBox box = ui.window();

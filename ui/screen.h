@@ -29,10 +29,14 @@ struct ScreenState {
   TypingState typing;
   FieldMapState map;
   ScrollState notice;
-  ScrollState whole;       // on a glass too low for a card
-  bool map_shown = false;  // on a glass too narrow for map and card: the map is shown
-  std::string showing;     // which card, of which pit
+  std::string notice_read;  // what the notice's scroll belongs to
+  ScrollState whole;        // on a glass too low for a card
+  bool map_shown = false;   // on a glass too narrow for map and card: the map is shown
+  std::string showing;      // which card, of which pit
 };
+
+// What a touch would act on: another text when another card, panel or notice came under the finger.
+std::string under_the_finger(const DeskView& desk, const ScreenState& state);
 
 void draw_screen(Ui& ui, const DeskView& desk, ScreenState& state, Sink& sink);
 

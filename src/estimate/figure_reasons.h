@@ -11,6 +11,7 @@
 
 #include <cstddef>
 #include <string>
+#include <string_view>
 #include <vector>
 
 #include "estimate/figures.h"
@@ -18,6 +19,10 @@
 #include "survey/survey.h"
 
 namespace nearpit {
+
+// Stands with every row per m2 that was not made with a random origin.
+constexpr std::string_view kGroundReason =
+    "per m2 and total hold for the ground if the lattice was laid without regard to what lies below";
 
 struct OpenWork {
   std::size_t due = 0;

@@ -156,8 +156,7 @@ class Rows {
     }
     if (settings_->listed) add_reason(&row->why, "holds if the listed pits were drawn at random");
     if (on_ground) {
-      add_reason(&row->why,
-                 "per m2 and total hold for the ground if the lattice was laid without regard to what lies below");
+      add_reason(&row->why, std::string(kGroundReason));
     }
   }
 

@@ -92,10 +92,9 @@ void BatchJudge::caution_if_stopped(const PitName& pit, const PitRecord& record)
   if (record.stop == StopReason::kUxoStop) what = "possible ordnance: leave it untouched, go back the way you came";
   if (record.stop == StopReason::kUtilityStop) what = "a buried line: stop, keep everybody away";
   if (what.empty()) return;
-  cautions_.push_back(
-      pit.label + ": " + what +
-      ", and tell those whom the law names; the pits around it stay on the dig list until you close the "
-      "area with 'act'");
+  cautions_.push_back(pit.label + ": " + what +
+                      ", and tell those whom the law names; the pits around it stay on the dig list until the area "
+                      "is closed");
 }
 
 void BatchJudge::remember_recorded(const PitName& pit, const std::string& field, ChosenBy chosen_by,

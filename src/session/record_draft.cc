@@ -10,8 +10,6 @@
 namespace nearpit {
 namespace {
 
-constexpr std::size_t kMostNote = 4000;
-constexpr std::size_t kMostWhy = 2000;
 constexpr std::size_t kMostCrew = 200;
 constexpr std::int64_t kMostCount = 1'000'000;  // as a table of pits takes it
 constexpr std::int64_t kMostStepped = 999'999;
@@ -278,7 +276,12 @@ Status not_overtaken(const RecordDraft& draft, const SurveyModel& model) {
 }
 
 bool catch_up(RecordDraft* draft, const SurveyModel& model) {
-  draft->counts.resize(std::max(draft->counts.size(), model.plan().finds.size()));
+  // Counts beyond the plan's finds (a draft of another plan's file) can't be shown; what they say is not lost.
+  for (std::size_t i = model.plan().finds.size(); i < draft->counts.size(); ++i) {
+    if (!draft->counts[i].empty())
+      draft->note += (draft->note.empty() ? "count of no find: " : "; count of no find: ") + draft->counts[i];
+  }
+  draft->counts.resize(model.plan().finds.size());
   const Ground ground = ground_of(model, draft->pit);
   if (!based_elsewhere(*draft, ground)) return false;
   draft->based_on = ground.revisions;
@@ -293,6 +296,10 @@ std::vector<std::string> missing(const RecordDraft& draft, const SurveyModel& mo
     lacking.push_back("a pit of this survey");
   } else if (ground.named->node == kNoNode && ground.standing == nullptr) {
     lacking.push_back("where it lies: log a pit off the grid from a table, with x and y");
+  }
+  if (ground.named && ground.standing == nullptr && !ground.conflict && !draft.judgement &&
+      on_judgement(model, *ground.named) && ground.named->node != kNoNode) {
+    lacking.push_back("that it is a judgement pit (under More): nothing calls for it any more");
   }
   miss_finds(draft, model, &lacking);
   miss_rest(draft, &lacking);

@@ -21,6 +21,9 @@
 
 namespace nearpit {
 
+constexpr std::size_t kMostNote = 4000;  // code points
+constexpr std::size_t kMostWhy = 2000;
+
 struct RecordDraft {
   std::string pit;       // label as the plan writes it, or the free label
   std::string based_on;  // ids of the pit's last revisions when the draft was filled; empty: nobody had written of it

@@ -117,18 +117,18 @@ TEST_F(FontsDrawn, ALetterThatNoFontHasIsAskedForOnceAndKeepsNothingBusy) {
   draw({"a"});
   EXPECT_EQ(draw({kNoLetter}), 1);
   Fonts fonts;
-  EXPECT_FALSE(fonts.want(kNoLetter));
-  EXPECT_FALSE(fonts.want(kNoLetter));
-  EXPECT_TRUE(fonts.want("\xE2\x88\x80"));
-  EXPECT_FALSE(fonts.want("\xE2\x88\x80"));
+  EXPECT_FALSE(fonts.want(kNoLetter, TextSize::kBase));
+  EXPECT_FALSE(fonts.want(kNoLetter, TextSize::kBase));
+  EXPECT_TRUE(fonts.want("\xE2\x88\x80", TextSize::kBase));
+  EXPECT_FALSE(fonts.want("\xE2\x88\x80", TextSize::kBase));
 }
 
 TEST_F(FontsDrawn, StrayBytesOfTextAreSurvived) {
   ASSERT_TRUE(gl.ok()) << gl.problem();
   draw({"\xFF", "\xE2\x88", "a\x80z", "\xF0\x9F\x8F"});
   Fonts fonts;
-  fonts.want("\xFF\xE2");
-  EXPECT_FALSE(fonts.want("\xFF\xE2"));
+  fonts.want("\xFF\xE2", TextSize::kBase);
+  EXPECT_FALSE(fonts.want("\xFF\xE2", TextSize::kBase));
 }
 
 }  // namespace

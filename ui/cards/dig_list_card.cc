@@ -14,7 +14,7 @@ constexpr double kMark_mm = 6;
 void proposed_pit(Ui& ui, PixelBox box, const SurveyView& survey, Sink& sink) {
   const DueRow& pit = *survey.proposed;
   const PixelBox button = cut_bottom(&box, ui.mm(kPrimary_mm), ui.mm(kGap_mm) / 2);
-  std::string place = pit.walk + " from " + (survey.walk_from.empty() ? "the grid's first corner" : survey.walk_from);
+  std::string place = pit.walk + " from " + (survey.walk_from.empty() ? "the grid's corner" : survey.walk_from);
   PixelBox head = cut_top(&box, ui.mm(line_mm(TextSize::kLarge)));
   const float label_width = ui.text_width(pit.label, TextSize::kLarge);
   ui.text(cut_left(&head, std::min(label_width + 1, head.width()), ui.mm(kGap_mm)), pit.label,
@@ -30,13 +30,22 @@ void proposed_pit(Ui& ui, PixelBox box, const SurveyView& survey, Sink& sink) {
   }
 }
 
-void due_row(Ui& ui, const PixelBox& box, const DueRow& row, bool chosen, bool asked, Sink& sink) {
-  if (ui.row(row.label, box, row.label, chosen))
-    sink.send(asked ? Request(ChoosePit{row.label}) : Request(WalkTo{row.stop.node}));
+enum class RowKind { kDue, kAsked, kLeft };
+
+// What a touch on the row asks for.
+Request touched(const DueRow& row, RowKind kind) {
+  if (kind == RowKind::kDue) return WalkTo{row.stop.node};
+  if (kind == RowKind::kAsked) return ChoosePit{row.label};
+  return OpenRecord{row.label};
+}
+
+void due_row(Ui& ui, const PixelBox& box, const DueRow& row, bool chosen, RowKind kind, Sink& sink) {
+  const bool asked = kind == RowKind::kAsked;
+  if (ui.row(row.label, box, row.label, chosen)) sink.send(touched(row, kind));
   const Ui::Part part = ui.part(row.label);
   PixelBox inside = in_row(ui, box);
   const PixelBox mark = cut_left(&inside, ui.mm(kMark_mm), ui.mm(2));
-  ui.mark(asked ? MarkShape::kDueAsked : MarkShape::kDue, mark.middle(), ui.mm(kMark_mm));
+  if (kind != RowKind::kLeft) ui.mark(asked ? MarkShape::kDueAsked : MarkShape::kDue, mark.middle(), ui.mm(kMark_mm));
   const Tone tone = chosen ? Tone::kOnChosen : Tone::kOnKey;
   const PixelBox label = cut_left(
       &inside, std::clamp(ui.text_width(row.label, TextSize::kBase) + 1, ui.mm(22), inside.width() * 0.42F), ui.mm(2));
@@ -89,15 +98,19 @@ void dig_list_card(Ui& ui, const PixelBox& box, const SurveyView& survey, DigLis
   }
   ui.text(tools, list_summary(survey), {.size = TextSize::kSmall, .lines = 3});
   const std::size_t due = survey.due.size();
-  paged_list(ui, "list", left, &state.scroll, due + survey.asked.size(), ui.mm(kRow_mm),
+  const std::size_t asked = survey.asked.size();
+  paged_list(ui, "list", left, &state.scroll, due + asked + survey.left_half_written.size(), ui.mm(kRow_mm),
              [&](std::size_t index, const PixelBox& row) {
-               if (index >= due) {
-                 const DueRow& asked = survey.asked[index - due];
-                 due_row(ui, row, asked, survey.chosen && survey.chosen->name.label == asked.label, true, sink);
-                 return;
+               if (index < due) {
+                 const DueRow& one = survey.due[index];
+                 due_row(ui, row, one, survey.proposed && survey.proposed->stop.node == one.stop.node, RowKind::kDue,
+                         sink);
+               } else if (index < due + asked) {
+                 const DueRow& one = survey.asked[index - due];
+                 due_row(ui, row, one, survey.chosen && survey.chosen->name.label == one.label, RowKind::kAsked, sink);
+               } else {
+                 due_row(ui, row, survey.left_half_written[index - due - asked], false, RowKind::kLeft, sink);
                }
-               const DueRow& one = survey.due[index];
-               due_row(ui, row, one, survey.proposed && survey.proposed->stop.node == one.stop.node, false, sink);
              });
 }
 

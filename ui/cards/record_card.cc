@@ -55,9 +55,11 @@ struct Editing {
     step_count(&typed(), by);
     counted();
   }
-  void nothing_found() {
-    draft.nothing_found = !draft.nothing_found;
-    if (draft.nothing_found) std::fill(draft.counts.begin(), draft.counts.end(), "");
+  // Counts that are typed stay: the record then says what does not go together.
+  void nothing_found() { draft.nothing_found = !draft.nothing_found; }
+  bool counts_typed() const {
+    return std::any_of(draft.counts.begin(), draft.counts.end(),
+                       [](const std::string& count) { return !count.empty(); });
   }
 };
 
@@ -111,34 +113,36 @@ bool said_row(Ui& ui, const std::string& name, const PixelBox& box, const std::s
 }
 
 void open_note(TypingState& typing, const RecordDraft& draft) {
-  begin_typing(&typing, TypingFor::kNote, "Note on " + draft.pit, draft.note, {}, 4000);
+  begin_typing(&typing, TypingFor::kNote, "Note on " + draft.pit, draft.note, {}, kMostNote);
 }
 
 void open_why(TypingState& typing, const RecordDraft& draft) {
   begin_typing(&typing, TypingFor::kWhyChanged, "Why the record of " + draft.pit + " is changed", draft.why,
-               {"miscounted", "typed wrong", "seen again in the lab"}, 2000);
+               {"miscounted", "typed wrong", "seen again in the lab"}, kMostWhy);
 }
 
 float main_rows(Ui& ui, PixelBox box, float shown, Editing& edit, TypingState& typing) {
   RecordDraft& draft = edit.draft;
   const float gap = ui.mm(kGap_mm);
+  // Counts typed before 'not dug' must be seen, because they don't go together.
+  const bool finds = !draft.not_dug || edit.counts_typed();
+  const std::size_t rows = (draft.amends ? 1u : 0u) + (draft.not_dug ? 1u : 2u) + (finds ? edit.finds() : 0u);
   // As tall as there is room for, up to a primary target.
-  const auto rows = static_cast<float>((draft.not_dug ? 1 : edit.finds() + 2) + (draft.amends ? 1 : 0));
-  const float height = std::clamp((shown + gap) / rows - gap, ui.mm(kTarget_mm), ui.mm(kPrimary_mm));
+  const float height =
+      std::clamp((shown + gap) / static_cast<float>(rows) - gap, ui.mm(kTarget_mm), ui.mm(kPrimary_mm));
   if (draft.amends && said_row(ui, "why", cut_top(&box, height, gap), "Why changed", draft.why, false))
     open_why(typing, draft);
-  if (draft.not_dug) {
-    if (said_row(ui, "reason", cut_top(&box, height, gap), "Not dug", draft.reason ? in_words(*draft.reason) : "",
-                 false))
-      edit.state.panel = RecordPanel::kNotDug;
-  } else {
-    for (std::size_t find = 0; find < edit.finds(); ++find)
-      find_row(ui, cut_top(&box, height, gap), edit, find);
-    depth_row(ui, cut_top(&box, height, gap), edit);
-    if (said_row(ui, "stop", cut_top(&box, height, gap), "Stopped at", draft.stop ? in_words(*draft.stop) : "",
-                 required(edit.survey, "stop"))) {
-      edit.state.panel = RecordPanel::kStop;
-    }
+  if (draft.not_dug && said_row(ui, "reason", cut_top(&box, height, gap), "Not dug",
+                                draft.reason ? in_words(*draft.reason) : "", false)) {
+    edit.state.panel = RecordPanel::kNotDug;
+  }
+  for (std::size_t find = 0; finds && find < edit.finds(); ++find)
+    find_row(ui, cut_top(&box, height, gap), edit, find);
+  if (draft.not_dug) return box.top - gap;
+  depth_row(ui, cut_top(&box, height, gap), edit);
+  if (said_row(ui, "stop", cut_top(&box, height, gap), "Stopped at", draft.stop ? in_words(*draft.stop) : "",
+               required(edit.survey, "stop"))) {
+    edit.state.panel = RecordPanel::kStop;
   }
   return box.top - gap;
 }
@@ -208,6 +212,7 @@ void head(Ui& ui, PixelBox box, Editing& edit, TypingState& typing, Sink& sink) 
       sink.send(ShowCard{CardKind::kDigList});
     } else {
       state.panel = RecordPanel::kMain;
+      state.sure_to_forget = false;
     }
   }
   if (main) {
@@ -237,9 +242,9 @@ void head(Ui& ui, PixelBox box, Editing& edit, TypingState& typing, Sink& sink) 
 void record_card(Ui& ui, const PixelBox& box, const SurveyView& survey, RecordCardState& state, TypingState& typing,
                  Sink& sink) {
   if (!survey.draft) return;
-  if (state.pit != survey.draft->pit) {
+  if (state.opened != survey.opened) {
     state = {};
-    state.pit = survey.draft->pit;
+    state.opened = survey.opened;
   }
   const Ui::Part part = ui.part("record");
   Editing edit{survey, state, *survey.draft};

@@ -14,14 +14,14 @@ namespace nearpit::ui {
 enum class RecordPanel { kMain, kStop, kNotDug, kMore, kMove, kHistory };
 
 struct RecordCardState {
-  std::string pit;  // whose record this state belongs to
+  int opened = 0;  // the record that this state belongs to (SurveyView::opened)
   RecordPanel panel = RecordPanel::kMain;
   std::size_t field = 0;  // what the digits go to: a find by number, or the depth behind the last
   bool fresh = true;      // the next digit begins the number anew
   ScrollState scroll;
   ScrollState history;
-  std::string move_to;  // the pit that the record belongs to
-  std::string move_why;
+  std::string move_to;          // the pit that the record belongs to
+  bool sure_to_forget = false;  // 'Forget' was touched once
 };
 
 // `typing` is opened for notes and reasons.

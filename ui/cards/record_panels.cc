@@ -20,6 +20,7 @@ constexpr std::array kGround = {NotDugReason::kStandingWater, NotDugReason::kSlo
 constexpr std::array kAccess = {NotDugReason::kNoPermission, NotDugReason::kUtility, NotDugReason::kHazard,
                                 NotDugReason::kStopWork, NotDugReason::kOther};
 constexpr int kColumns = 3;
+constexpr std::size_t kMostLabel = 40;
 
 bool warns(StopReason reason) {
   return reason == StopReason::kHumanRemainsStop || reason == StopReason::kUxoStop ||
@@ -87,61 +88,70 @@ void more_panel(Ui& ui, const PixelBox& box, const SurveyView& survey, RecordDra
   const Ui::Part part = ui.part("more");
   PixelBox left = box;
   const auto next = [&] { return cut_top(&left, ui.mm(kTarget_mm), ui.mm(kGap_mm)); };
+  const ButtonLook plain{.align = Align::kLeft};
   if (ui.button("judgement", next(), draft.judgement ? "Judgement pit: yes" : "Judgement pit: no",
                 {.chosen = draft.judgement, .align = Align::kLeft})) {
     draft.judgement = !draft.judgement;
   }
-  const bool recorded = draft.amends;
-  if (recorded && ui.button("move", next(), "This record belongs to another pit", {.align = Align::kLeft})) {
-    state.panel = RecordPanel::kMove;
-    state.move_to.clear();
-  }
-  if (recorded && ui.button("withdraw", next(), "Withdraw this record", {.align = Align::kLeft})) {
-    begin_typing(&typing, TypingFor::kWhyWithdrawn, "Why the record of " + draft.pit + " is withdrawn", "",
-                 {"written on the wrong pit", "never dug", "written twice"}, 2000);
-  }
   const bool judgement_positive =
       survey.recorded_pit && survey.recorded_pit->mark.judgement && survey.recorded_pit->mark.mark == Mark::kPositive;
-  if (judgement_positive &&
-      ui.button("neighbours", next(), "Put its neighbours on the list", {.align = Align::kLeft})) {
-    begin_typing(&typing, TypingFor::kWhyNeighbours, "Why the neighbours of " + draft.pit + " are dug", "",
-                 {"to see how far it goes"}, 2000);
+  if (draft.amends && survey.typed) {
+    ui.text(next(), "To move or withdraw the record, first save or forget what you changed.",
+            {.size = TextSize::kSmall, .tone = Tone::kQuiet, .lines = 3});
+  } else if (draft.amends) {
+    if (ui.button("move", next(), "This record belongs to another pit", plain)) {
+      state.panel = RecordPanel::kMove;
+      state.move_to.clear();
+      sink.send(ChoosePit{draft.pit});  // so that only a pit touched from now on is meant
+    }
+    if (ui.button("withdraw", next(), "Withdraw this record", plain)) {
+      begin_typing(&typing, TypingFor::kWhyWithdrawn, "Why the record of " + draft.pit + " is withdrawn", draft.why,
+                   {"written on the wrong pit", "never dug", "written twice"}, kMostWhy);
+    }
+    if (judgement_positive && ui.button("neighbours", next(), "Put its neighbours on the list", plain)) {
+      begin_typing(&typing, TypingFor::kWhyNeighbours, "Why the neighbours of " + draft.pit + " are dug", draft.why,
+                   {"to see how far it goes"}, kMostWhy);
+    }
   }
   if (survey.recorded_pit && !survey.recorded_pit->history.empty() &&
-      ui.button("history", next(), "History of this pit", {.align = Align::kLeft})) {
+      ui.button("history", next(), "History of this pit", plain)) {
     state.panel = RecordPanel::kHistory;
   }
-  if (ui.button("drop", next(), recorded ? "Forget what I changed just now" : "Forget what I typed just now",
-                {.align = Align::kLeft})) {
-    sink.send(DropDraft{});
-  }
+  left.top += ui.mm(kGap_mm);
+  const std::string what = draft.amends ? "Forget what I changed just now" : "Forget what I typed just now";
+  if (!ui.button("drop", next(), state.sure_to_forget ? "Touch again to forget all of it" : what,
+                 {.warning = state.sure_to_forget, .align = Align::kLeft}))
+    return;
+  if (state.sure_to_forget) sink.send(DropDraft{});
+  state.sure_to_forget = !state.sure_to_forget;
 }
 
 void move_panel(Ui& ui, const PixelBox& box, const SurveyView& survey, RecordCardState& state, TypingState& typing,
                 Sink& sink) {
   const Ui::Part part = ui.part("move");
   PixelBox left = box;
-  const std::string pit = survey.draft->pit;
+  const std::string& pit = survey.draft->pit;
+  const std::string& why = survey.draft->why;
   // The pit that was touched on the map since this panel was opened.
   if (survey.chosen && survey.chosen->name.label != pit) state.move_to = survey.chosen->name.label;
   ui.text(cut_top(&left, ui.mm(2 * line_mm(TextSize::kBase)), ui.mm(kGap_mm)),
           "Which pit was it really? Touch it on the map, or type its label.", {.lines = 2});
   if (ui.button("other", cut_top(&left, ui.mm(kTarget_mm), ui.mm(kGap_mm)),
                 state.move_to.empty() ? "Type the label" : "It was " + state.move_to, {.shorten = true})) {
-    begin_typing(&typing, TypingFor::kMoveTo, "The record of " + pit + " belongs to", state.move_to, {}, 40);
+    begin_typing(&typing, TypingFor::kMoveTo, "The record of " + pit + " belongs to", state.move_to, {}, kMostLabel);
   }
-  if (ui.button("why", cut_top(&left, ui.mm(kTarget_mm), ui.mm(kGap_mm)),
-                state.move_why.empty() ? "Say why" : "Why: " + state.move_why, {.shorten = true})) {
-    begin_typing(&typing, TypingFor::kWhyMoved, "Why the record moves from " + pit, state.move_why,
-                 {"written on the wrong pit", "wrong line"}, 2000);
+  if (ui.button("why", cut_top(&left, ui.mm(kTarget_mm), ui.mm(kGap_mm)), why.empty() ? "Say why" : "Why: " + why,
+                {.shorten = true})) {
+    begin_typing(&typing, TypingFor::kWhyMoved, "Why the record moves from " + pit, why,
+                 {"written on the wrong pit", "wrong line"}, kMostWhy);
   }
-  const bool ready = !state.move_to.empty() && !state.move_why.empty();
+  const bool ready = !state.move_to.empty() && !why.empty();
   const std::string label = ready ? "Move the record to " + state.move_to : "Say which pit and why";
   if (ui.button(
           "do", cut_top(&left, ui.mm(kPrimary_mm)), label,
           {.kind = ready ? ButtonKind::kPrimary : ButtonKind::kPlain, .least_mm = kPrimary_mm, .shorten = true}) &&
       ready) {
-    sink.send(MoveRecord{state.move_to, state.move_why});
+    sink.send(MoveRecord{state.move_to, why});
   }
 }
 

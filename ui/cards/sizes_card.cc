@@ -9,10 +9,11 @@ namespace {
 
 constexpr double kSmallStep = 1.005;
 constexpr double kLargeStep = 1.03;
+constexpr double kLeastGlass_mm = 125;
 
 }  // namespace
 
-void sizes_card(Ui& ui, const PixelBox& box, SizesState& state, Sink& sink) {
+void sizes_card(Ui& ui, const PixelBox& box, bool survey_open, SizesState& state, Sink& sink) {
   const Ui::Part part = ui.part("sizes");
   if (state.px_per_mm <= 0) state.px_per_mm = ui.glass().px_per_mm;
   PixelBox left = box;
@@ -26,13 +27,21 @@ void sizes_card(Ui& ui, const PixelBox& box, SizesState& state, Sink& sink) {
   const auto step = [&](std::string_view name, const std::string& label, double factor) {
     if (ui.button(name, cut_left(&foot, ui.mm(kPrimary_mm), ui.mm(kGap_mm)), label,
                   {.least_mm = kPrimary_mm, .size = TextSize::kLarge})) {
-      state.px_per_mm = std::clamp(state.px_per_mm * factor, kLeastPxPerMm, kMostPxPerMm);
+      // Never so large that a card no longer fits the glass.
+      const double most = std::min(kMostPxPerMm, ui.glass().width_px / kLeastGlass_mm);
+      state.px_per_mm = std::clamp(state.px_per_mm * factor, kLeastPxPerMm, std::max(kLeastPxPerMm, most));
     }
   };
   step("much-smaller", "\xE2\x88\x92\xE2\x88\x92", 1 / kLargeStep);
   step("smaller", "\xE2\x88\x92", 1 / kSmallStep);
   step("larger", "+", kSmallStep);
   step("much-larger", "++", kLargeStep);
+  if (ui.button("later", cut_left(&foot, ui.mm(26), ui.mm(kGap_mm)), "Not now", {.least_mm = kPrimary_mm}) ||
+      ui.take(Key::kEscape)) {
+    state.px_per_mm = 0;
+    sink.send(ShowCard{survey_open ? CardKind::kDigList : CardKind::kStart});
+    return;
+  }
   if (ui.button("fits", foot, "The card fits", {.kind = ButtonKind::kPrimary, .least_mm = kPrimary_mm})) {
     sink.send(SetMillimetre{state.px_per_mm});
     state.px_per_mm = 0;

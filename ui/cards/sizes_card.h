@@ -11,7 +11,7 @@ struct SizesState {
   double px_per_mm = 0;  // as tried; 0: the glass's own
 };
 
-void sizes_card(Ui& ui, const PixelBox& box, SizesState& state, Sink& sink);
+void sizes_card(Ui& ui, const PixelBox& box, bool survey_open, SizesState& state, Sink& sink);
 
 }  // namespace nearpit::ui
 

@@ -59,7 +59,9 @@ void places(Ui& ui, PixelBox box, const DeskView& desk, Sink& sink) {
 
 void files(Ui& ui, PixelBox box, const FolderList& folder, StartState& state, Sink& sink) {
   PixelBox head = cut_top(&box, ui.mm(kTarget_mm), ui.mm(kGap_mm));
-  if (ui.button("up", cut_right(&head, ui.mm(30), ui.mm(kGap_mm)), "Folder above", {.size = TextSize::kSmall}) &&
+  if (ui.button("places", cut_right(&head, ui.mm(24), ui.mm(kGap_mm)), "Other places", {.size = TextSize::kSmall}))
+    sink.send(BrowseFolder{""});
+  if (ui.button("up", cut_right(&head, ui.mm(24), ui.mm(kGap_mm)), "Folder above", {.size = TextSize::kSmall}) &&
       !folder.parent.empty()) {
     sink.send(BrowseFolder{folder.parent});
   }

@@ -22,9 +22,10 @@ constexpr double kTab_mm = 22;
 void last_save(Ui& ui, const PixelBox& box, const DeskView& desk) {
   const Notice& notice = desk.notice;
   const SurveyView& survey = *desk.survey;
-  if (notice.kind == NoticeKind::kNotSaved) {
+  if (!survey.refused.empty()) {
     ui.fill(box, ui.theme().warning.fill, 1);
-    ui.text(box.inset(ui.mm(0.5)), "NOT saved", {.align = Align::kCentre, .tone = Tone::kOnWarning});
+    ui.text(box.inset(ui.mm(0.5)), "NOT saved: " + survey.refused,
+            {.align = Align::kCentre, .tone = Tone::kOnWarning, .lines = 2, .shorten = true});
   } else if (notice.kind == NoticeKind::kSaved) {
     ui.fill(box, ui.theme().good.fill, 1);
     ui.text(box.inset(ui.mm(0.5)), "Saved " + notice.text,
@@ -48,8 +49,8 @@ void strip(Ui& ui, const PixelBox& box, const DeskView& desk, bool with_map, boo
   const float tab_width = (right.width() - (tabs - 1) * gap) / tabs;
   for (const Tab& tab : kTabs) {
     const bool chosen = desk.card == tab.card;
-    const bool asked =
-        ui.button(tab.name, cut_left(&right, tab_width, gap), tab.label, {.chosen = chosen}) || ui.take(tab.key);
+    const bool asked = ui.button(tab.name, cut_left(&right, tab_width, gap), tab.label, {.chosen = chosen}) ||
+                       (!desk.notice.to_be_read() && ui.take(tab.key));
     if (!asked) continue;
     *map_shown = false;
     sink.send(ShowCard{tab.card});

@@ -56,10 +56,10 @@ TypingAnswer typing_card(Ui& ui, const PixelBox& box, TypingState& state) {
   TypingAnswer answer = TypingAnswer::kNone;
   if (ui.button("done", cut_right(&head, ui.mm(34), ui.mm(kGap_mm)), "Done", {.kind = ButtonKind::kPrimary}))
     answer = TypingAnswer::kDone;
-  if (ui.button("leave", cut_right(&head, ui.mm(34), ui.mm(kGap_mm)), "Leave as it was", {.size = TextSize::kSmall}) ||
-      ui.take(Key::kEscape)) {
+  if (ui.button("leave", cut_right(&head, ui.mm(34), ui.mm(kGap_mm)), "Leave as it was", {.size = TextSize::kSmall}))
     answer = TypingAnswer::kLeft;
-  }
+  // Notes and reasons are kept with every letter: Esc goes back and throws none away.
+  if (ui.take(Key::kEscape)) answer = TypingAnswer::kBack;
   ui.text(head, state.title, {.lines = 2, .shorten = true});
   typed_line(ui, cut_top(&left, ui.mm(10), ui.mm(kGap_mm)), state.line);
   if (!state.phrases.empty() && phrase_buttons(ui, cut_top(&left, ui.mm(kTarget_mm), ui.mm(kGap_mm)), state) &&

@@ -36,8 +36,8 @@ struct TypingState {
 void begin_typing(TypingState* state, TypingFor what, const std::string& title, const std::string& text,
                   std::vector<std::string> phrases, std::size_t most);
 
-enum class TypingAnswer { kNone, kChanged, kDone, kLeft };
-// kLeft: the text is again what stood before.
+// kBack: closed by Esc, the text as typed; kLeft: the text is again what stood before.
+enum class TypingAnswer { kNone, kChanged, kDone, kBack, kLeft };
 TypingAnswer typing_card(Ui& ui, const PixelBox& box, TypingState& state);
 
 }  // namespace nearpit::ui

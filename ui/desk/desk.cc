@@ -35,6 +35,20 @@ void Desk::carry_out(const Request& request) {
   std::visit([this](const auto& one) { carry_out_one(one); }, request);
 }
 
+bool Desk::look_at_the_clock() {
+  if (!session_ || today_ == format_date(now())) return false;
+  if (view_.notice.kind == NoticeKind::kSaved && !view_.notice.to_be_read()) view_.notice = {};
+  survey_changed();
+  return true;
+}
+
+std::int64_t Desk::ms_to_midnight() const {
+  constexpr std::int64_t kDay_ms = 24 * 60 * 60 * 1000;
+  const WallTime time = now();
+  const std::int64_t of_day = ((time.utc_ms + time.offset_min * 60'000LL) % kDay_ms + kDay_ms) % kDay_ms;
+  return kDay_ms - of_day;
+}
+
 void Desk::say(const Error& error) { view_.notice = {NoticeKind::kSays, one_text(error), {}}; }
 
 WallTime Desk::now() const {
@@ -56,6 +70,11 @@ void Desk::keep_preferences() {
 // ---- start ----
 
 void Desk::carry_out_one(const BrowseFolder& request) {
+  if (request.path.empty()) {
+    view_.folder.reset();
+    view_.places = usual_places();
+    return;
+  }
   auto list = list_folder(request.path, {".gpkg", ".json"}, TimeZone::utc());
   if (list) {
     view_.folder = std::move(*list);
@@ -73,8 +92,8 @@ void Desk::open(const std::string& path) {
     return;
   }
   session_ = std::make_unique<Session>(std::move(*session));
-  draft_file_ = std::make_unique<DraftFile>(environment_.user_folder, session_->survey_id());
-  drafts_.clear();
+  book_ = std::make_unique<DraftBook>(environment_.user_folder, session_->survey_id());
+  drafts_refused_ = false;
   walk_to_ = kNoNode;
   view_.notice = {};
   view_.survey.emplace();
@@ -116,7 +135,8 @@ void Desk::carry_out_one(const MakeSurvey& request) {
 void Desk::carry_out_one(const CloseSurvey&) {
   view_.survey.reset();
   session_.reset();
-  draft_file_.reset();
+  book_.reset();
+  view_.places = usual_places();
   view_.notice = {};
   view_.card = CardKind::kStart;
   if (view_.folder) carry_out_one(BrowseFolder{view_.folder->path});
@@ -124,45 +144,45 @@ void Desk::carry_out_one(const CloseSurvey&) {
 
 // ---- drafts ----
 
+namespace {
+
+constexpr const char* kOvertaken =
+    " was recorded by somebody else since you began. What you typed is kept: look at the pit's history, then save "
+    "yours with the reason, or forget it.";
+
+}  // namespace
+
 void Desk::read_drafts() {
-  bool overtaken = false;
-  for (RecordDraft& draft : draft_file_->read()) {
-    const auto name = session_->model().name_of(draft.pit);
-    if (catch_up(&draft, session_->model())) {
-      // The crash came after it was saved: its record says all of it, and why was said there.
-      RecordDraft rest = draft;
-      rest.why.clear();
-      if (!typed_anything(rest, session_->model())) continue;
-      overtaken = true;
-    }
-    // What was being written when the program ended is what the crew stands at.
-    if (name && session_->model().survey().dig_list().due(std::max(name->node, 0)) && name->node != kNoNode)
-      walk_to_ = name->node;
-    drafts_[draft.pit] = std::move(draft);
-  }
-  if (overtaken) {
+  if (book_->read(session_->model())) {
     view_.notice = {NoticeKind::kSays,
                     "A half-written record was begun before the pit's record changed; look at it before you save it.",
                     {}};
   }
+  // What was being written when the program ended is what the crew stands at.
+  for (const auto& [label, draft] : book_->all()) {
+    const auto name = session_->model().name_of(label);
+    if (name && name->node != kNoNode && survey().dig_list().due(name->node)) walk_to_ = name->node;
+  }
 }
 
-bool Desk::keep_drafts() {
-  std::vector<RecordDraft> all;
-  for (const auto& [label, draft] : drafts_) {
-    if (!view_.survey->draft || view_.survey->draft->pit != label) all.push_back(draft);
-  }
-  if (view_.survey->draft && typed_anything(*view_.survey->draft, session_->model()))
-    all.push_back(*view_.survey->draft);
-  const Status kept = draft_file_->write(all);
-  // Said once, not with every touch: typing and saving go on all the same.
-  if (!kept && !drafts_refused_) {
+// Said once, not with every touch: typing and saving go on all the same.
+bool Desk::told(const Status& kept) {
+  if (!kept && !drafts_refused_ && !view_.notice.to_be_read()) {
     view_.notice = {NoticeKind::kSays,
                     "What is half typed can't be kept on this disk (a crash would lose it): " + one_text(kept.error()),
                     {}};
   }
   drafts_refused_ = !kept;
   return kept.ok();
+}
+
+// The record's card goes; what was typed is in the book.
+void Desk::put_draft_away() {
+  if (!view_.survey->draft) return;
+  view_.survey->draft.reset();
+  view_.survey->recorded_pit.reset();
+  list_due();
+  propose();
 }
 
 void Desk::carry_out_one(const OpenRecord& request) {
@@ -172,12 +192,20 @@ void Desk::carry_out_one(const OpenRecord& request) {
     say(name.error());
     return;
   }
-  const auto kept = drafts_.find(name->label);
-  view_.survey->draft = kept == drafts_.end() ? new_draft(session_->model(), *name, now()) : kept->second;
-  if (name->node != kNoNode && survey().dig_list().due(name->node)) walk_to_ = name->node;
-  view_.survey->chosen = chosen_pit(*name);
-  view_.survey->recorded_pit = view_.survey->chosen;
+  SurveyView& view = *view_.survey;
   view_.card = CardKind::kRecord;
+  if (view.draft && view.draft->pit == name->label) return;
+  put_draft_away();
+  const RecordDraft* kept = book_->find(name->label);
+  view.draft = kept != nullptr ? *kept : new_draft(session_->model(), *name, now());
+  if (kept != nullptr && overtaken_draft(&*view.draft, session_->model())) {
+    told(book_->keep(*view.draft, session_->model()));
+    view_.notice = {NoticeKind::kSays, name->label + kOvertaken, {}};
+  }
+  ++view.opened;
+  if (name->node != kNoNode && survey().dig_list().due(name->node)) walk_to_ = name->node;
+  view.chosen = chosen_pit(*name);
+  view.recorded_pit = view.chosen;
   draft_changed();
   propose();
 }
@@ -186,43 +214,35 @@ void Desk::draft_changed() {
   SurveyView& view = *view_.survey;
   view.missing.clear();
   view.blanks.clear();
+  view.typed = false;
   if (!view.draft) return;
   view.missing = missing(*view.draft, session_->model());
   view.blanks = blanks(*view.draft, session_->model(), view.crew);
+  RecordDraft beside_why = *view.draft;
+  beside_why.why.clear();
+  view.typed = typed_anything(beside_why, session_->model());
 }
 
 void Desk::carry_out_one(const KeepDraft& request) {
   if (!session_ || !view_.survey->draft || view_.survey->draft->pit != request.draft.pit) return;
   view_.survey->draft = request.draft;
-  keep_drafts();
+  told(book_->keep(request.draft, session_->model()));
   draft_changed();
 }
 
 void Desk::carry_out_one(const DropDraft&) {
   if (!session_ || !view_.survey->draft) return;
-  drafts_.erase(view_.survey->draft->pit);
-  view_.survey->draft.reset();
-  keep_drafts();
+  const std::string label = view_.survey->draft->pit;
+  told(book_->forget(label));
+  if (view_.survey->refused == label) view_.survey->refused.clear();
+  put_draft_away();
   view_.card = CardKind::kDigList;
-  survey_changed();
 }
 
 // ---- cards ----
 
 void Desk::carry_out_one(const ShowCard& request) {
-  if (view_.card == CardKind::kRecord && session_ && view_.survey->draft) {
-    // Left half written: kept under its pit.
-    const RecordDraft draft = *view_.survey->draft;
-    if (typed_anything(draft, session_->model())) {
-      drafts_[draft.pit] = draft;
-    } else {
-      drafts_.erase(draft.pit);
-    }
-    view_.survey->draft.reset();
-    keep_drafts();
-    list_due();
-    propose();
-  }
+  if (session_ && request.card != CardKind::kRecord) put_draft_away();
   view_.card = session_ || request.card == CardKind::kStart || request.card == CardKind::kSizes ||
                        request.card == CardKind::kKeys
                    ? request.card
@@ -241,9 +261,8 @@ void Desk::carry_out_one(const WalkTo& request) {
   if (!session_) return;
   walk_to_ = request.node;
   propose();
-  view_.survey->chosen = chosen_pit({request.node, "", session_->model().label(request.node)});
-  if (const auto name = session_->model().name_of(view_.survey->chosen->name.label))
-    view_.survey->chosen = chosen_pit(*name);
+  const auto name = session_->model().name_of(session_->model().label(request.node));
+  if (name) view_.survey->chosen = chosen_pit(*name);
 }
 
 void Desk::carry_out_one(const GridPitsFirst& request) {
@@ -278,22 +297,35 @@ void Desk::carry_out_one(const SetMillimetre& request) {
   if (view_.card == CardKind::kSizes) view_.card = session_ ? CardKind::kDigList : CardKind::kStart;
 }
 
-void Desk::carry_out_one(const DismissNotice&) { view_.notice = {}; }
+void Desk::carry_out_one(const DismissNotice&) {
+  // 'Saved' stays on the strip.
+  if (view_.notice.kind == NoticeKind::kSaved) {
+    view_.notice.more.clear();
+  } else {
+    view_.notice = {};
+  }
+}
 
 // ---- writing ----
+
+void Desk::refuse(const std::string& label, const std::string& why) {
+  view_.notice = {NoticeKind::kNotSaved, label + ": " + why, {}};
+  view_.survey->refused = label;
+}
 
 void Desk::write(const Action& action, const std::string& label, const std::string& done) {
   const RecordDraft draft = *view_.survey->draft;
   const auto applied = session_->apply({action}, [&](const SurveyModel& model) { return not_overtaken(draft, model); });
   if (!applied) {
-    view_.notice = {NoticeKind::kNotSaved, label + ": " + one_text(applied.error()), {}};
+    refuse(label, one_text(applied.error()));
     others_wrote();
     return;
   }
   view_.notice = {NoticeKind::kSaved, label + done + " at " + when(now(), now()), applied->notes};
-  drafts_.erase(label);
-  view_.survey->draft.reset();
-  keep_drafts();
+  if (view_.survey->refused == label) view_.survey->refused.clear();
+  // That the copy of what was typed can't be removed is told the next time; the record is on the disk.
+  static_cast<void>(book_->forget(label));
+  put_draft_away();
   view_.card = CardKind::kDigList;
   const auto name = session_->model().name_of(label);
   survey_changed();
@@ -311,12 +343,9 @@ void Desk::others_wrote() {
   survey_changed();
   if (!overtaken) return;
   if (const auto name = session_->model().name_of(view.draft->pit)) view.chosen = view.recorded_pit = chosen_pit(*name);
-  if (!keep_drafts()) return;
-  view_.notice = {NoticeKind::kNotSaved,
-                  view.draft->pit +
-                      " was recorded by somebody else since you opened it. What you typed is kept: look at the pit's "
-                      "history, then save yours with the reason, or forget it.",
-                  {}};
+  draft_changed();
+  static_cast<void>(book_->keep(*view.draft, session_->model()));
+  view_.notice = {NoticeKind::kNotSaved, view.draft->pit + kOvertaken, {}};
 }
 
 void Desk::carry_out_one(const SaveRecord&) {
@@ -324,26 +353,41 @@ void Desk::carry_out_one(const SaveRecord&) {
   const RecordDraft draft = *view_.survey->draft;
   const auto action = action_of(draft, session_->model(), view_.survey->crew, now());
   if (!action) {
-    view_.notice = {NoticeKind::kNotSaved, draft.pit + ": " + one_text(action.error()), {}};
+    refuse(draft.pit, one_text(action.error()));
     return;
   }
   write(*action, draft.pit, draft.amends ? " changed" : "");
 }
 
+// A record that stands is taken back, moved or opened around as it stands: changes half typed would go with it unsaid.
+bool Desk::may_change(const std::string& why) {
+  if (!session_ || !view_.survey->draft) return false;
+  const std::string& label = view_.survey->draft->pit;
+  if (view_.survey->typed) {
+    refuse(label, "what you changed is not saved yet; save or forget that first");
+    return false;
+  }
+  if (!is_note(why, kMostWhy)) {
+    refuse(label, "say why");
+    return false;
+  }
+  return true;
+}
+
 void Desk::carry_out_one(const WithdrawRecord& request) {
-  if (!session_ || !view_.survey->draft) return;
+  if (!may_change(request.why)) return;
   const std::string label = view_.survey->draft->pit;
   write({WithdrawPit{label}, view_.survey->crew, request.why, {}}, label, " withdrawn");
 }
 
 void Desk::carry_out_one(const MoveRecord& request) {
-  if (!session_ || !view_.survey->draft) return;
+  if (!may_change(request.why)) return;
   const std::string label = view_.survey->draft->pit;
   write({BelongsTo{label, request.other}, view_.survey->crew, request.why, {}}, label, " moved to " + request.other);
 }
 
 void Desk::carry_out_one(const OpenNeighbours& request) {
-  if (!session_ || !view_.survey->draft) return;
+  if (!may_change(request.why)) return;
   const std::string label = view_.survey->draft->pit;
   write({AskNeighbours{label}, view_.survey->crew, request.why, {}}, label, ": its neighbours are on the list");
 }
@@ -373,6 +417,7 @@ void Desk::survey_changed() {
   }
   view.order = session_->dig_order(view.crew, std::nullopt);
   const WallTime today = now();
+  today_ = format_date(today);
   view.pits_today = 0;
   const auto count = [&](const PitEntry& entry) {
     if (!entry.withdrawn() && entry.record().dug_at.starts_with(format_date(today))) ++view.pits_today;
@@ -405,7 +450,7 @@ DueRow Desk::due_row(const DigStop& stop) const {
   row.because = because(session_->model(), stop);
   row.walk = metres(stop.distance_m) + ", " + bearing(stop.bearing_deg);
   row.ring = steps_out(stop.ring);
-  row.half_written = drafts_.contains(row.label);
+  row.half_written = book_->find(row.label) != nullptr;
   return row;
 }
 
@@ -424,12 +469,24 @@ void Desk::list_due() {
     row.stop.place = model.survey().ground().frame.ground(node);
     row.label = model.label(node);
     row.because = "asked for by the crew";
-    row.half_written = drafts_.contains(row.label);
+    row.half_written = book_->find(row.label) != nullptr;
     view.asked.push_back(std::move(row));
   }
-  view.half_written.clear();
-  for (const auto& [label, draft] : drafts_)
-    view.half_written.push_back(label);
+  // Half written, and on neither list: changes of records, pits that nothing calls for any more.
+  view.left_half_written.clear();
+  for (const auto& [label, draft] : book_->all()) {
+    const auto name = model.name_of(label);
+    const bool listed =
+        name && name->node != kNoNode &&
+        (model.survey().dig_list().due(name->node) ||
+         std::find(view.order.asked.begin(), view.order.asked.end(), name->node) != view.order.asked.end());
+    if (listed) continue;
+    DueRow row;
+    row.label = label;
+    row.because = draft.amends ? "a change of its record" : "not on the list";
+    row.half_written = true;
+    view.left_half_written.push_back(std::move(row));
+  }
 }
 
 void Desk::propose() {

@@ -3,13 +3,12 @@
 #ifndef NEARPIT_UI_DESK_DESK_H_
 #define NEARPIT_UI_DESK_DESK_H_
 
-#include <map>
 #include <memory>
 #include <string>
 #include <vector>
 
 #include "desk/desk_view.h"
-#include "session/draft_file.h"
+#include "desk/draft_book.h"
 #include "session/environment.h"
 #include "session/preferences.h"
 #include "session/session.h"
@@ -22,6 +21,10 @@ class Desk {
   explicit Desk(Environment& environment);
 
   void carry_out(const Request& request);
+  // What a new day changes: pits today, times without a date. Whether there is one.
+  bool look_at_the_clock();
+  // From now to the next midnight where the survey lies, at least 1.
+  std::int64_t ms_to_midnight() const;
   const DeskView& view() const { return view_; }
 
  private:
@@ -49,8 +52,10 @@ class Desk {
   void keep_preferences();
   void open(const std::string& path);
   void read_drafts();
-  // Keeps what is typed on the disk; false, and a notice the first time, when that fails.
-  bool keep_drafts();
+  bool told(const Status& kept);
+  void put_draft_away();
+  void refuse(const std::string& label, const std::string& why);
+  bool may_change(const std::string& why);
   // One write; on success the record's card closes and the list is shown.
   void write(const Action& action, const std::string& label, const std::string& done);
   void others_wrote();
@@ -69,10 +74,10 @@ class Desk {
   PreferenceFile preference_file_;
   Preferences preferences_;
   std::unique_ptr<Session> session_;
-  std::unique_ptr<DraftFile> draft_file_;
-  std::map<std::string, RecordDraft> drafts_;  // by label, of pits that were left half written
-  bool drafts_refused_ = false;                // the last time
-  NodeId walk_to_ = kNoNode;                   // what the crew is walking to
+  std::unique_ptr<DraftBook> book_;
+  bool drafts_refused_ = false;  // the last time
+  std::string today_;            // of what is shown
+  NodeId walk_to_ = kNoNode;     // what the crew is walking to
   DeskView view_;
 };
 

@@ -76,10 +76,13 @@ struct SurveyView {
   std::optional<Figures> figures;  // while the day or the clusters are shown
   std::size_t pits_today = 0;
   std::string last_save;                  // "14:32", "4 May 14:32", "" while nothing is saved
-  std::vector<std::string> half_written;  // labels of pits with drafts
+  std::vector<DueRow> left_half_written;  // pits with drafts that stand on neither list
+  std::string refused;                    // the pit whose last save was refused, until it is saved or forgotten
   std::optional<ChosenPit> chosen;
   std::optional<RecordDraft> draft;       // of the open record
   std::optional<ChosenPit> recorded_pit;  // what the open record is of
+  bool typed = false;                     // it says something that stands in no record, a reason aside
+  int opened = 0;                         // how many records were opened; another number is another record
   std::vector<std::string> missing;       // what must be said before it can be saved
   std::vector<std::string> blanks;        // what the plan asks for beside that
 };

@@ -15,7 +15,7 @@ enum class CardKind { kStart, kSizes, kDigList, kRecord, kClusters, kDay, kOffic
 struct ShowCard {
   CardKind card = CardKind::kDigList;
 };
-// Lists a folder's surveys and plans on the start card.
+// Lists a folder's surveys and plans on the start card; an empty path shows the usual places again, with cards and sticks put in since.
 struct BrowseFolder {
   std::string path;
 };

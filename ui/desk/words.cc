@@ -5,6 +5,7 @@
 
 #include "base/numbers.h"
 #include "base/text.h"
+#include "estimate/figure_reasons.h"
 
 namespace nearpit::ui {
 namespace {
@@ -114,14 +115,9 @@ std::string because(const SurveyModel& model, const DigStop& stop) {
 }
 
 std::string reason_in_words(const std::string& why) {
-  std::string text = why;
-  const auto replace = [&](std::string_view from, std::string_view to) {
-    for (std::size_t at = text.find(from); at != std::string::npos; at = text.find(from, at + to.size()))
-      text.replace(at, from.size(), to);
-  };
-  replace("per m2", "per m\xC2\xB2");
-  replace("lattice", "grid");
-  return text;
+  if (why == kGroundReason)
+    return "per m\xC2\xB2 and the whole ground hold if the grid was laid without regard to what lies below";
+  return why;
 }
 
 std::string when(const WallTime& time, const WallTime& now) {

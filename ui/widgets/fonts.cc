@@ -14,13 +14,16 @@ namespace {
 constexpr ImWchar kRanges[] = {0x0020, 0x007E, 0x00A0, 0x024F, 0x02C6, 0x02DD, 0x0370, 0x03FF, 0x0400,
                                0x052F, 0x1E00, 0x1EFF, 0x2010, 0x2027, 0x2030, 0x203A, 0x20AC, 0x20AC,
                                0x2190, 0x2193, 0x2212, 0x2212, 0x2248, 0x2248, 0x2264, 0x2265, 0};
+// What labels and numbers are made of: the large size, which costs most, begins with these.
+constexpr ImWchar kLargeRanges[] = {0x0020, 0x007E, 0x00A0, 0x00FF, 0x2013, 0x2013, 0x2026,
+                                    0x2026, 0x2190, 0x2193, 0x2212, 0x2212, 0};
 constexpr double kSmallMark_mm = 3;
 constexpr double kLargeMark_mm = 7;
 constexpr int kMargin_px = 2;  // free around each mark, so that none bleeds into its neighbour when it is drawn smaller
 constexpr char32_t kLastOfPlane = 0xFFFF;  // the atlas holds the basic plane only
 
-bool in_ranges(char32_t character) {
-  for (const ImWchar* range = kRanges; *range != 0; range += 2) {
+bool in_ranges(char32_t character, const ImWchar* ranges) {
+  for (const ImWchar* range = ranges; *range != 0; range += 2) {
     if (character >= range[0] && character <= range[1]) return true;
   }
   return false;
@@ -78,8 +81,9 @@ void Fonts::build(ImFontAtlas* atlas, double px_per_mm, const Theme& theme) {
   atlas->FontBuilderIO = ImGuiFreeType::GetBuilderForFreeType();
   atlas->TexDesiredWidth = 0;
   std::vector<std::vector<ImWchar>> ranges;  // must outlive Build
-  ranges.reserve(others_.size() + 1);
+  ranges.reserve(others_.size() + 2);
   ranges.push_back(as_ranges(own_));
+  ranges.push_back(as_ranges(large_));
   for (const auto& [file, characters] : others_)
     ranges.push_back(as_ranges(characters));
   for (std::size_t i = 0; i < kTextSizes; ++i) {
@@ -97,9 +101,11 @@ void Fonts::build(ImFontAtlas* atlas, double px_per_mm, const Theme& theme) {
       ImFont* font = atlas->AddFontFromFileTTF(file.path.c_str(), px, &config, range);
       if (!merge) fonts_[i] = font;
     };
-    add(*sans_, kRanges, false);
-    add(*sans_, ranges.front().data(), true);
-    std::size_t other = 1;
+    const bool large = static_cast<TextSize>(i) == TextSize::kLarge;
+    add(*sans_, large ? kLargeRanges : kRanges, false);
+    add(*sans_, ranges[0].data(), true);
+    if (large) add(*sans_, ranges[1].data(), true);
+    std::size_t other = 2;
     for (const auto& [file, characters] : others_)
       add(file, ranges[other++].data(), true);
   }
@@ -149,11 +155,16 @@ const MarkImage& Fonts::mark(MarkShape shape, float size_px) const {
   return marks_[size_px > small_px_ * 1.2F ? 1 : 0][static_cast<std::size_t>(shape)];
 }
 
-bool Fonts::want(std::string_view text) {
+bool Fonts::want(std::string_view text, TextSize size) {
   bool found = false;
   for (std::size_t at = 0; at < text.size();) {
     const char32_t character = next_character(text, &at);
-    if (character < 0x80 || in_ranges(character) || character > kLastOfPlane) continue;
+    if (character < 0x80 || character > kLastOfPlane) continue;
+    if (in_ranges(character, kRanges)) {
+      const bool lacks = size == TextSize::kLarge && sans_ && !in_ranges(character, kLargeRanges);
+      found = (lacks && large_.insert(character).second) || found;
+      continue;
+    }
     if (!sans_ || !known_.insert(character).second) continue;
     const std::optional<FontFile> file = font_with(character);
     if (!file) continue;

@@ -41,7 +41,7 @@ class Fonts {
 
   // Looks for letters that are not in the texture yet; whether there are new ones, so that build() should run before the next frame.
   // Letters that no font of this machine has are asked for once only.
-  bool want(std::string_view text);
+  bool want(std::string_view text, TextSize size);
   // Nothing when this machine has a scalable font; else what to do.
   const std::string& complaint() const { return complaint_; }
 
@@ -53,6 +53,7 @@ class Fonts {
   std::string complaint_;
   std::map<FontFile, std::set<char32_t>> others_;  // faces for letters that the first lacks
   std::set<char32_t> own_;                         // letters of the first face beside its ranges
+  std::set<char32_t> large_;                       // letters within its ranges that the large size was asked for
   std::set<char32_t> known_;                       // looked for already
   std::array<ImFont*, kTextSizes> fonts_{};
   std::array<std::array<int, kMarkShapes>, 2> rects_{};

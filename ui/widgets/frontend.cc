@@ -59,6 +59,7 @@ void Frontend::begin(const FrameInput& input) {
     if (gl_) {
       ImGui_ImplOpenGL3_DestroyFontsTexture();
       ImGui_ImplOpenGL3_CreateFontsTexture();
+      io.Fonts->ClearTexData();  // the texture has it
     }
     rebuild_ = false;
   }

@@ -1,5 +1,8 @@
 #include "widgets/input_queue.h"
 
+#include <algorithm>
+#include <cmath>
+
 namespace nearpit::ui {
 namespace {
 
@@ -40,11 +43,30 @@ struct Taker {
 
 }  // namespace
 
-void InputQueue::add(const InputEvent& event) {
+void InputQueue::add(const InputEvent& event, Milliseconds at) {
   if (std::holds_alternative<PointerPressed>(event)) will_be_down_ = true;
   if (std::holds_alternative<PointerReleased>(event)) will_be_down_ = false;
   if (std::holds_alternative<PointerMoved>(event) && !will_be_down_) return;
-  waiting_.push_back(event);
+  waiting_.push_back({event, at});
+}
+
+void InputQueue::screen_changed(Milliseconds now, float reach_px) {
+  guarded_until_ = now + kSecondTouch_ms;
+  guarded_ = last_press_;
+  guard_px_ = reach_px;
+}
+
+bool InputQueue::drop(const Waiting& waiting) {
+  if (const auto* press = std::get_if<PointerPressed>(&waiting.event)) {
+    const float far = std::max(std::abs(press->at.x - guarded_.x), std::abs(press->at.y - guarded_.y));
+    dropping_ = guarded_until_ && waiting.at < *guarded_until_ && far < guard_px_;
+    if (!dropping_) last_press_ = press->at;
+    return dropping_;
+  }
+  if (!dropping_) return false;
+  const bool released = std::holds_alternative<PointerReleased>(waiting.event);
+  if (released) dropping_ = false;
+  return released || std::holds_alternative<PointerMoved>(waiting.event);
 }
 
 FrameInput InputQueue::next_frame() {
@@ -53,8 +75,9 @@ FrameInput InputQueue::next_frame() {
   frame.down = down_;
   bool full = false;
   while (!full && !waiting_.empty()) {
-    full = std::visit(Taker{&frame}, waiting_.front());
+    const Waiting next = waiting_.front();
     waiting_.pop_front();
+    if (!drop(next)) full = std::visit(Taker{&frame}, next.event);
   }
   pointer_ = frame.pointer;
   down_ = frame.down;

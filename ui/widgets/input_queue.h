@@ -2,9 +2,13 @@
 //
 // A frame takes at most one press, release, key or character, so that a tap shorter than a frame is never lost and keys act in the order
 // in which they were struck. Movements before it are taken with it.
+//
+// A second touch on the same place just after another card came there was meant for what is gone (a bounce, an impatient finger): it is dropped, whole, where
+// screen_changed() says so.
 #ifndef NEARPIT_UI_WIDGETS_INPUT_QUEUE_H_
 #define NEARPIT_UI_WIDGETS_INPUT_QUEUE_H_
 
+#include <cstdint>
 #include <deque>
 #include <optional>
 #include <variant>
@@ -12,6 +16,11 @@
 #include "pixel_box.h"
 
 namespace nearpit::ui {
+
+// Milliseconds of a clock that never goes back.
+using Milliseconds = std::int64_t;
+
+constexpr Milliseconds kSecondTouch_ms = 400;
 
 enum class Key {
   kTab,
@@ -65,12 +74,26 @@ struct FrameInput {
 class InputQueue {
  public:
   // Movement of a pointer that is up changes nothing on the screen and waits for no frame.
-  void add(const InputEvent& event);
+  // `at` is when it came.
+  void add(const InputEvent& event, Milliseconds at = 0);
+  // What the last press acted on has gone from the screen at `now`: presses within `reach_px` of it that came, or come, before kSecondTouch_ms have passed are dropped.
+  void screen_changed(Milliseconds now, float reach_px);
   bool empty() const { return waiting_.empty(); }
   FrameInput next_frame();
 
  private:
-  std::deque<InputEvent> waiting_;
+  struct Waiting {
+    InputEvent event;
+    Milliseconds at = 0;
+  };
+  bool drop(const Waiting& waiting);
+
+  std::deque<Waiting> waiting_;
+  Pixel last_press_{-1, -1};
+  std::optional<Milliseconds> guarded_until_;
+  Pixel guarded_;
+  float guard_px_ = 0;
+  bool dropping_ = false;  // the press was dropped, so is what follows until its release
   Pixel pointer_{-1, -1};
   bool down_ = false;          // after the last frame
   bool will_be_down_ = false;  // after what waits

@@ -212,7 +212,7 @@ void Ui::draw_lines(const PixelBox& box, const std::vector<std::string>& lines, 
 
 void Ui::text(const PixelBox& box, const std::string& text, const TextLook& look) {
   if (text.empty()) return;
-  wants_letters_ = fonts_->want(text) || wants_letters_;
+  wants_letters_ = fonts_->want(text, look.size) || wants_letters_;
   const auto fits = [&](const std::vector<std::string>& lines, TextSize size) {
     const auto most = static_cast<std::size_t>(std::max(look.lines, 1));
     const float tall = static_cast<float>(lines.size()) * fonts_->of(size)->FontSize;
@@ -257,7 +257,7 @@ void Ui::text(const PixelBox& box, const std::string& text, const TextLook& look
 }
 
 void Ui::map_text(Pixel top_middle, const std::string& text) {
-  wants_letters_ = fonts_->want(text) || wants_letters_;
+  wants_letters_ = fonts_->want(text, TextSize::kSmall) || wants_letters_;
   ImFont* font = fonts_->of(TextSize::kSmall);
   const float width = text_width(text, TextSize::kSmall);
   const PixelBox box{std::round(top_middle.x - width / 2), std::round(top_middle.y),

@@ -132,6 +132,8 @@ std::optional<Key> key_of(int key, int modifiers) {
   }
 }
 
+bool may_repeat(Key key) { return key != Key::kEnter && key != Key::kEscape; }
+
 class AppWindow {
  public:
   explicit AppWindow(Environment& environment) : desk_(environment) {}
@@ -149,6 +151,7 @@ class AppWindow {
  private:
   static AppWindow& of(GLFWwindow* window) { return *static_cast<AppWindow*>(glfwGetWindowUserPointer(window)); }
   void take_events();
+  void add(const InputEvent& event) { queue_.add(event, now()); }
   void measure();
   void draw();
   void tell_widgets() const;
@@ -179,6 +182,8 @@ class AppWindow {
   double pixels_x_ = 1;
   double pixels_y_ = 1;
   IdleState idle_;
+  bool repeats_ = false;  // the last key was held down
+  std::string shown_;     // what lies under the finger
 };
 
 Status AppWindow::open() {
@@ -195,6 +200,8 @@ Status AppWindow::open() {
   glfwMakeContextCurrent(window_);
   glfwSwapInterval(1);
   NEARPIT_TRY(frontend_.start_gl());
+  if (const std::string& complaint = frontend_.fonts().complaint(); !complaint.empty())
+    std::fprintf(stderr, "note: %s\n", complaint.c_str());
   if (monitor != nullptr) {
     int width_mm = 0;
     int height_mm = 0;
@@ -210,23 +217,26 @@ Status AppWindow::open() {
 
 void AppWindow::take_events() {
   glfwSetWindowUserPointer(window_, this);
-  glfwSetCursorPosCallback(window_, [](GLFWwindow* window, double x, double y) {
-    of(window).queue_.add(PointerMoved{of(window).on_glass(x, y)});
-  });
+  glfwSetCursorPosCallback(
+      window_, [](GLFWwindow* window, double x, double y) { of(window).add(PointerMoved{of(window).on_glass(x, y)}); });
   glfwSetMouseButtonCallback(window_, [](GLFWwindow* window, int button, int action, int) {
     if (button != GLFW_MOUSE_BUTTON_LEFT) return;
     const Pixel at = of(window).pointer();
-    of(window).queue_.add(action == GLFW_PRESS ? InputEvent(PointerPressed{at}) : InputEvent(PointerReleased{at}));
+    of(window).add(action == GLFW_PRESS ? InputEvent(PointerPressed{at}) : InputEvent(PointerReleased{at}));
   });
   glfwSetScrollCallback(window_, [](GLFWwindow* window, double, double steps) {
-    of(window).queue_.add(WheelTurned{of(window).pointer(), static_cast<float>(steps)});
+    of(window).add(WheelTurned{of(window).pointer(), static_cast<float>(steps)});
   });
   glfwSetKeyCallback(window_, [](GLFWwindow* window, int key, int, int action, int modifiers) {
-    if (action == GLFW_RELEASE) return;
-    if (const auto own = key_of(key, modifiers)) of(window).queue_.add(KeyStruck{*own});
+    of(window).repeats_ = action == GLFW_REPEAT;
+    const auto own = key_of(key, modifiers);
+    // A key that is held down moves and rubs out again and again, and does nothing else twice.
+    if (action == GLFW_RELEASE || !own || (action == GLFW_REPEAT && !may_repeat(*own))) return;
+    of(window).add(KeyStruck{*own});
   });
   glfwSetCharCallback(window_, [](GLFWwindow* window, unsigned int character) {
-    of(window).queue_.add(CharacterTyped{static_cast<char32_t>(character)});
+    if (of(window).repeats_ && of(window).screen_.typing.what == TypingFor::kNothing) return;
+    of(window).add(CharacterTyped{static_cast<char32_t>(character)});
   });
   const auto redraw = [](GLFWwindow* window) { of(window).idle_.changed = true; };
   glfwSetWindowRefreshCallback(window_, redraw);
@@ -256,6 +266,7 @@ void AppWindow::tell_widgets() const {
 }
 
 void AppWindow::draw() {
+  desk_.look_at_the_clock();
   measure();
   if (glass_.width_px < 1 || glass_.height_px < 1) {
     idle_ = after_frame(idle_, false);
@@ -268,7 +279,11 @@ void AppWindow::draw() {
     desk_.carry_out(request);
   idle_ = after_frame(idle_, frontend_.unsettled());
   idle_.changed = !asked.empty();
+  const std::string under = under_the_finger(desk_.view(), screen_);
+  if (under != shown_) queue_.screen_changed(now(), glass_.px(kTarget_mm));
+  shown_ = under;
   idle_.input_waits = !queue_.empty();
+  idle_.deadline = now() + desk_.ms_to_midnight();
   // With more input waiting the next frame shows more; only what stays is shown.
   if (idle_.input_waits) return;
   frontend_.render();
