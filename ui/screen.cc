@@ -31,8 +31,9 @@ void typed_for(const TypingState& typing, TypingAnswer answer, const DeskView& d
       RecordDraft draft = *desk.survey->draft;
       (typing.what == TypingFor::kNote ? draft.note : draft.why) = text;
       sink.send(KeepDraft{draft});
-      if (done && typing.what == TypingFor::kWhyWithdrawn) sink.send(WithdrawRecord{text});
-      if (done && typing.what == TypingFor::kWhyNeighbours) sink.send(OpenNeighbours{text});
+      if (!done || text.find_first_not_of(' ') == std::string::npos) return;
+      if (typing.what == TypingFor::kWhyWithdrawn) sink.send(WithdrawRecord{text});
+      if (typing.what == TypingFor::kWhyNeighbours) sink.send(OpenNeighbours{text});
       return;
     }
     case TypingFor::kMoveTo:

@@ -193,6 +193,12 @@ class Tour {
       screen.tap("typing/done");
       see(screen, "record, changed");
       screen.tap("record/more");
+      see(screen, "record, more, changed");
+      screen.tap("record/more/drop");
+      see(screen, "record, more, about to forget");
+      screen.tap("record/more/drop");
+      choose_on_map(screen, "T5-5");
+      screen.tap_all({"map/record-chosen", "record/more"});
       see(screen, "record, more, recorded");
       screen.tap("record/more/move");
       see(screen, "record, move");
@@ -260,6 +266,8 @@ class Tour {
     screen.tap("record/reasons/was-dug");
     screen.tap("record/nothing-found");
     see(screen, "record, nothing found");
+    // Counts and 'nothing found' don't go together; the counts stay.
+    if (!screen.view().survey->missing.empty()) screen.tap("record/nothing-found");
     world.write_elsewhere(file, "T1-1", 7);
     screen.tap("record/save");
     see(screen, "notice, not saved");

@@ -88,7 +88,7 @@ TEST_F(Keyboard, ASurveyIsMadeAndAnotherPitTakenByTheRing) {
   act_on(screen, "start/place-0");
   act_on(screen, "start/file-terrace.json");
   act_on(screen, "start/make");
-  screen.key(Key::kEnter);  // the notice is read
+  act_on(screen, "notice/understood");
   act_on(screen, "dig-list/T5-5");
   screen.key(Key::kEscape);
   screen.type("rn");
@@ -435,7 +435,7 @@ class EachKey : public Keyboard {
     again.type("r");
     EXPECT_EQ(again.view().survey->draft->counts[0], "7");
   }
-  static void drop(ScreenDriver& screen) { screen.tap_all({"record/more", "record/more/drop"}); }
+  static void drop(ScreenDriver& screen) { screen.tap_all({"record/more", "record/more/drop", "record/more/drop"}); }
 
   std::string file;
   std::map<std::string, std::function<void()>> checks;

@@ -198,6 +198,8 @@ TEST_F(RecordChanges, ForgetWhatITypedEmptiesTheRecord) {
   const std::string file = world.make();
   ScreenDriver screen(world, {}, file);
   screen.tap_all({"dig-list/record", "record/digits/7", "record/more", "record/more/drop"});
+  EXPECT_FALSE(screen.shows("dig-list/record")) << "one touch forgets nothing";
+  screen.tap("record/more/drop");
   ASSERT_TRUE(screen.shows("dig-list/record"));
   EXPECT_EQ(screen.widget("dig-list/record").label, "Record T1-1");
   screen.tap("dig-list/record");

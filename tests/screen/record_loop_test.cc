@@ -98,12 +98,15 @@ TEST_F(RecordLoop, NothingFoundAndACountExcludeEachOther) {
   ScreenDriver screen(world, {}, file);
   screen.tap_all({"dig-list/record", "record/digits/7", "record/nothing-found"});
   EXPECT_TRUE(screen.widget("record/nothing-found").chosen);
-  EXPECT_EQ(screen.said("record/find-0/count"), "0 flake");
+  EXPECT_EQ(screen.said("record/find-0/count"), "7 flake") << "a count is never wiped by a touch beside it";
+  screen.tap("record/save");
+  ASSERT_TRUE(screen.shows("record/save")) << "they don't go together";
+  EXPECT_EQ(world.record(world.read(file), "T1-1"), nullptr);
   screen.tap("record/find-1/more");
   EXPECT_FALSE(screen.widget("record/nothing-found").chosen);
   screen.tap("record/save");
   Session session = world.read(file);
-  EXPECT_EQ(world.record(session, "T1-1")->counts, (std::vector<std::uint32_t>{0, 1, 0}));
+  EXPECT_EQ(world.record(session, "T1-1")->counts, (std::vector<std::uint32_t>{7, 1, 0}));
 }
 
 TEST_F(RecordLoop, SavingBeforeWhatIsNeededSaysWhatIsMissingAndRecordsNothing) {

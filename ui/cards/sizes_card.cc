@@ -23,6 +23,7 @@ void sizes_card(Ui& ui, const PixelBox& box, bool survey_open, SizesState& state
           "Hold a bank card against the glass and make the frame as wide as the card, so that buttons are as large as "
           "a finger in a glove needs.",
           {.lines = 2});
+  const PixelBox last = cut_bottom(&left, ui.mm(kPrimary_mm), ui.mm(kGap_mm));
   PixelBox foot = cut_bottom(&left, ui.mm(kPrimary_mm), ui.mm(kGap_mm));
   const auto step = [&](std::string_view name, const std::string& label, double factor) {
     if (ui.button(name, cut_left(&foot, ui.mm(kPrimary_mm), ui.mm(kGap_mm)), label,
@@ -36,13 +37,12 @@ void sizes_card(Ui& ui, const PixelBox& box, bool survey_open, SizesState& state
   step("smaller", "\xE2\x88\x92", 1 / kSmallStep);
   step("larger", "+", kSmallStep);
   step("much-larger", "++", kLargeStep);
-  if (ui.button("later", cut_left(&foot, ui.mm(26), ui.mm(kGap_mm)), "Not now", {.least_mm = kPrimary_mm}) ||
-      ui.take(Key::kEscape)) {
+  if (ui.button("later", cut_right(&foot, ui.mm(30)), "Not now", {.least_mm = kPrimary_mm}) || ui.take(Key::kEscape)) {
     state.px_per_mm = 0;
     sink.send(ShowCard{survey_open ? CardKind::kDigList : CardKind::kStart});
     return;
   }
-  if (ui.button("fits", foot, "The card fits", {.kind = ButtonKind::kPrimary, .least_mm = kPrimary_mm})) {
+  if (ui.button("fits", last, "The card fits", {.kind = ButtonKind::kPrimary, .least_mm = kPrimary_mm})) {
     sink.send(SetMillimetre{state.px_per_mm});
     state.px_per_mm = 0;
   }
