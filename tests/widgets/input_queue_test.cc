@@ -90,6 +90,46 @@ TEST(InputQueue, ASecondPressOrReleaseWithoutTheOtherIsNone) {
   EXPECT_TRUE(again.down);
 }
 
+void tap(InputQueue* queue, Pixel at, Milliseconds when) {
+  queue->add(PointerPressed{at}, when);
+  queue->add(PointerReleased{at}, when + 1);
+}
+
+int presses(InputQueue* queue) {
+  int count = 0;
+  while (!queue->empty()) {
+    const FrameInput frame = queue->next_frame();
+    count += frame.pressed ? 1 : 0;
+  }
+  return count;
+}
+
+TEST(InputQueue, ASecondTouchOnACardThatJustCameIsDropped) {
+  InputQueue queue;
+  tap(&queue, {100, 100}, 1000);
+  EXPECT_EQ(presses(&queue), 1);
+  // The bounce had come already when the first touch's card was drawn, late.
+  tap(&queue, {104, 98}, 1100);
+  queue.screen_changed(1900, 50);
+  EXPECT_EQ(presses(&queue), 0);
+  EXPECT_FALSE(queue.next_frame().down);
+  tap(&queue, {104, 98}, 1900 + kSecondTouch_ms - 1);
+  EXPECT_EQ(presses(&queue), 0);
+  tap(&queue, {104, 98}, 1900 + kSecondTouch_ms);
+  EXPECT_EQ(presses(&queue), 1);
+}
+
+TEST(InputQueue, ATouchElsewhereOnACardThatJustCameIsMeant) {
+  InputQueue queue;
+  tap(&queue, {100, 100}, 1000);
+  EXPECT_EQ(presses(&queue), 1);
+  queue.screen_changed(1010, 50);
+  tap(&queue, {100, 151}, 1020);
+  EXPECT_EQ(presses(&queue), 1);
+  queue.add(CharacterTyped{U'7'}, 1021);
+  EXPECT_EQ(queue.next_frame().character, U'7');
+}
+
 // Whatever comes, in whatever order: nothing is lost but movement while up, and nothing changes places.
 TEST(InputQueue, KeepsTheOrderOfWhatComesIn) {
   TestRandom random = TestRandom::of_this_run();
