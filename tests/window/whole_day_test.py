@@ -20,6 +20,7 @@ FINDS = json.loads(PLAN.read_text())["finds"]
 MORNING = "2026-05-04T08:10:00.000+00:00"
 AFTERNOON = "2026-05-04T14:20:00.000+00:00"
 FILE, TWIN = "plans/brook.gpkg", "twin.gpkg"
+BUTTONS_MM = 14
 FIT_MARGIN_MM = 6  # ui/field_map: what 'All' leaves free around the survey
 
 
@@ -65,6 +66,8 @@ class Places:
         return [self.first[i] + column * self.along[i] + row * self.across[i] for i in (0, 1)]
 
     def glass(self, label, box, margin):
+        """Where the pit lies when the whole survey is shown; the column of buttons at the right (14 mm) is left free."""
+        box = box._replace(right=box.right - margin / FIT_MARGIN_MM * BUTTONS_MM)
         scale = min((box.right - box.left - 2 * margin) / (self.high[0] - self.low[0]),
                     (box.bottom - box.top - 2 * margin) / (self.high[1] - self.low[1]))
         x, y = self.ground(label)
@@ -117,7 +120,7 @@ class Day(unittest.TestCase):
     def choose_crew(self):
         self.window.click("strip/crew", "office/crew-0")
         self.window.key("d")
-        self.assertEqual(self.window.control("strip/crew").label, "A")
+        self.assertEqual(self.window.control("strip/crew").label, "At work: A")
 
     def proposed(self):
         return self.window.control("dig-list/record").label.split()[-1]
