@@ -112,6 +112,17 @@ TEST_F(HalfTyped, SeveralPitsAreLeftHalfWrittenAndEachIsKept) {
   EXPECT_EQ(screen.said("record/find-0/count"), "7 flake");
 }
 
+TEST_F(HalfTyped, APitOffTheListThatIsHalfWrittenIsOneTouchAway) {
+  killed_after([](ScreenDriver& screen) {
+    screen.tap_at(to_screen(screen.map_view(), screen.map_box(), {35, 15}));
+    screen.tap_all({"map/record-chosen", "record/find-1/more"});
+  });
+  ScreenDriver screen(world, {}, file);
+  EXPECT_THAT(screen.said("dig-list/T2-4"), HasSubstr("half written"));
+  screen.tap("dig-list/T2-4");
+  EXPECT_EQ(screen.said("record/find-1/count"), "1 sherd");
+}
+
 TEST_F(HalfTyped, ARecordThatIsOnlyLookedAtIsNotHalfWritten) {
   {
     ScreenDriver screen(world, {}, file);

@@ -57,6 +57,7 @@ class NotSaved : public testing::Test {
     screen.tap("notice/understood");
     EXPECT_EQ(screen.said("record/find-0/count"), "42 flake");
     EXPECT_THAT(screen.said("record/note"), HasSubstr("near the oak"));
+    EXPECT_THAT(screen.said("strip"), HasSubstr("NOT saved")) << "until it is";
     allow();
     EXPECT_EQ(world.read(file).revision(), 0);
     screen.tap("record/save");

@@ -78,6 +78,28 @@ TEST_F(RecordChanges, LeaveAsItWasTakesTheTypingBack) {
   EXPECT_EQ(world.record(session, "T1-1")->note, "first");
 }
 
+TEST_F(RecordChanges, EscapeLeavesATextAndThrowsNoneOfItAway) {
+  const std::string file = world.make();
+  ScreenDriver screen(world, {}, file);
+  screen.tap_all({"dig-list/record", "record/nothing-found", "record/note"});
+  screen.type("kept");
+  screen.key(Key::kEscape);
+  screen.tap("record/save");
+  Session session = world.read(file);
+  ASSERT_NE(world.record(session, "T1-1"), nullptr);
+  EXPECT_EQ(world.record(session, "T1-1")->note, "kept");
+}
+
+TEST_F(RecordChanges, AReasonOfBlanksIsNone) {
+  const std::string file = world.make();
+  ScreenDriver screen(world, {}, file);
+  record_negative(screen);
+  open_from_map(screen, "T1-1");
+  screen.tap_all(
+      {"record/more", "record/more/withdraw", "typing/letters/space", "typing/letters/space", "typing/done"});
+  EXPECT_EQ(world.read(file).revision(), 1);
+}
+
 TEST_F(RecordChanges, ANodeThatIsNotDueBecomesAJudgementPitAndOpensNeighboursOnRequest) {
   const std::string file = world.make();
   ScreenDriver screen(world, {}, file);

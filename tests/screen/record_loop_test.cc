@@ -235,6 +235,17 @@ TEST_F(RecordLoop, TheStripCountsPitsAndSaysWhenTheLastWasSaved) {
   EXPECT_NE(again.said("strip").find("Last save 09:32"), std::string::npos) << again.said("strip");
 }
 
+TEST_F(RecordLoop, ANewDayBeginsAtMidnightWithNoPitsAndNoSavedLeftStanding) {
+  const std::string file = world.make();
+  ScreenDriver screen(world, {}, file);
+  screen.tap_all({"dig-list/record", "record/nothing-found", "record/save"});
+  EXPECT_THAT(screen.said("strip"), testing::HasSubstr("1 pit today"));
+  world.minute = 16 * 60;
+  screen.tap("strip/dig-list");
+  EXPECT_THAT(screen.said("strip"), testing::HasSubstr("0 pits today"));
+  EXPECT_THAT(screen.said("strip"), testing::HasSubstr("Last save 4 May 09:00"));
+}
+
 TEST_F(RecordLoop, AnotherPitOfTheListIsTakenAndStaysProposed) {
   const std::string file = world.make();
   ScreenDriver screen(world, {}, file);

@@ -7,6 +7,7 @@
 namespace nearpit::ui {
 namespace {
 
+constexpr Milliseconds kFrame_ms = 17;
 constexpr int kMostFrames = 400;
 constexpr int kMostDrags = 80;
 constexpr int kDragSteps = 5;
@@ -40,6 +41,8 @@ ScreenDriver::ScreenDriver(const ScreenWorld& world, const TestGlass& glass, con
 }
 
 void ScreenDriver::draw() {
+  now_ += kFrame_ms;
+  desk_.look_at_the_clock();
   glass_ = {test_glass_.width_px, test_glass_.height_px, desk_.view().px_per_mm.value_or(test_glass_.px_per_mm())};
   frontend_.frame(&queue_, glass_, desk_.view().dusk ? dusk_theme() : sun_theme(),
                   [this](Ui& ui) { draw_screen(ui, desk_.view(), screen_, sink_); });
@@ -48,7 +51,11 @@ void ScreenDriver::draw() {
     desk_.carry_out(request);
   idle_ = after_frame(idle_, frontend_.unsettled());
   idle_.changed = !asked.empty();
+  const std::string under = under_the_finger(desk_.view(), screen_);
+  if (under != shown_) queue_.screen_changed(now_, glass_.px(kTarget_mm));
+  shown_ = under;
   idle_.input_waits = !queue_.empty();
+  idle_.deadline = now_ + desk_.ms_to_midnight();
   ++frames_;
 }
 
@@ -71,10 +78,9 @@ std::vector<unsigned char> ScreenDriver::pixels() {
   return frontend_.read_pixels();
 }
 
-void ScreenDriver::add(const InputEvent& event) { queue_.add(event); }
-
 void ScreenDriver::press(Pixel at) {
   ++touches_;
+  now_ += pace_;
   add(PointerPressed{at});
   settle();
 }
@@ -105,6 +111,7 @@ void ScreenDriver::tap_all(const std::vector<std::string>& paths) {
 }
 
 void ScreenDriver::drag(Pixel from, Pixel to) {
+  now_ += pace_;
   add(PointerPressed{from});
   settle();
   for (int step = 1; step <= kDragSteps; ++step) {

@@ -41,7 +41,9 @@ class ScreenDriver {
   void key(Key key, int times = 1);
   void type(const std::string& utf8);
   // Several events before any frame.
-  void add(const InputEvent& event);
+  void add(const InputEvent& event) { queue_.add(event, now_); }
+  // How long somebody takes before each touch.
+  void set_pace(Milliseconds pace) { pace_ = pace; }
   // Draws as long as the idle policy says so.
   void settle();
 
@@ -92,6 +94,8 @@ class ScreenDriver {
   Glass glass_;
   IdleState idle_;
   Milliseconds now_ = 0;
+  Milliseconds pace_ = 600;
+  std::string shown_;
   int touches_ = 0;
   int frames_ = 0;
 };

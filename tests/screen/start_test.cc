@@ -45,6 +45,17 @@ TEST_F(Start, SizesAreWhatTheCardWasFittedTo) {
   EXPECT_NEAR(again.widget("start/keys").box.height(), 12 * again.glass().px_per_mm, 1);
 }
 
+TEST_F(Start, SizesCanWait) {
+  {
+    ScreenDriver screen(world);
+    screen.tap_all({"sizes/much-larger", "sizes/later"});
+    EXPECT_TRUE(screen.shows("start/keys"));
+    EXPECT_NEAR(screen.glass().px_per_mm, TestGlass().px_per_mm(), 1e-9);
+  }
+  ScreenDriver again(world);
+  EXPECT_TRUE(again.shows("sizes/fits")) << "they are asked for again";
+}
+
 TEST_F(Start, AFileGivenOnTheFirstStartIsShownAfterTheSizes) {
   const std::string file = world.make();
   ScreenDriver screen(world, {}, file);
@@ -162,6 +173,9 @@ TEST_F(Start, FoldersAreWalkedIntoAndOutOf) {
   EXPECT_TRUE(screen.shows("start/file-plan.json"));
   screen.tap("start/up");
   EXPECT_TRUE(screen.shows("start/file-north"));
+  screen.tap("start/places");
+  EXPECT_TRUE(screen.shows("start/place-0"));
+  browse_home(screen);
   screen.tap_all({"start/file-north", "start/file-plan.json", "start/back"});
   EXPECT_TRUE(screen.shows("start/file-plan.json"));
 }

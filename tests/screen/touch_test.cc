@@ -74,6 +74,54 @@ TEST_F(Touch, ATapShorterThanAFrameActs) {
   EXPECT_TRUE(screen.shows("record/save"));
 }
 
+TEST_F(Touch, AnImpatientSecondTouchDoesNotActOnTheCardThatCameUnderIt) {
+  const std::string file = world.make();
+  std::string once;
+  Pixel button;
+  {
+    ScreenDriver screen(world, {}, file);
+    button = screen.middle_of("dig-list/record");
+    screen.tap_at(button);
+    once = widget_lines(screen.log());
+  }
+  ScreenDriver screen(world, {}, file);
+  screen.set_pace(80);
+  screen.tap_at(button);
+  screen.tap_at(button);
+  screen.tap_at({button.x + screen.glass().px(5), button.y});
+  EXPECT_EQ(widget_lines(screen.log()), once);
+  // Elsewhere at once, and there a little later, it acts.
+  screen.tap("record/nothing-found");
+  EXPECT_TRUE(screen.widget("record/nothing-found").chosen);
+  screen.set_pace(600);
+  screen.tap("record/save");
+  EXPECT_EQ(world.read(file).revision(), 1);
+}
+
+TEST_F(Touch, SavingTwiceInAHurryRecordsOnce) {
+  const std::string file = world.make();
+  ScreenDriver screen(world, {}, file);
+  screen.tap_all({"dig-list/record", "record/nothing-found"});
+  const Pixel save = screen.middle_of("record/save");
+  screen.add(PointerPressed{save});
+  screen.add(PointerReleased{save});
+  screen.add(PointerPressed{save});
+  screen.add(PointerReleased{save});
+  screen.settle();
+  EXPECT_EQ(world.read(file).revision(), 1);
+  EXPECT_TRUE(screen.shows("dig-list/record"));
+  EXPECT_EQ(screen.widget("dig-list/record").label, "Record T3-3");
+}
+
+TEST_F(Touch, QuickTouchesOnTheSameCardAllCount) {
+  ScreenDriver screen(world, {}, world.make());
+  screen.tap_all({"dig-list/record", "record/find-0/more"});
+  screen.set_pace(40);
+  for (int i = 0; i < 6; ++i)
+    screen.tap_at(screen.middle_of("record/find-0/more"));
+  EXPECT_EQ(screen.view().survey->draft->counts[0], "7");
+}
+
 TEST_F(Touch, DrawingAListMovesItAndActsOnNoRow) {
   ScreenDriver screen(world, {}, world.make(many()));
   const float before = screen.widget("dig-list/T1-3").box.top;

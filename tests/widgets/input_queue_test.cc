@@ -130,6 +130,64 @@ TEST(InputQueue, ATouchElsewhereOnACardThatJustCameIsMeant) {
   EXPECT_EQ(queue.next_frame().character, U'7');
 }
 
+// ---- a second touch on what has just come ----
+
+TEST(InputQueue, APressNearTheLastOneIsDroppedWithItsReleaseWhenTheScreenChangedUnderIt) {
+  InputQueue queue;
+  queue.add(PointerPressed{{100, 100}}, 1000);
+  queue.add(PointerReleased{{100, 100}}, 1050);
+  queue.next_frame();
+  queue.next_frame();
+  queue.screen_changed(1060, 50);
+  queue.add(PointerPressed{{110, 95}}, 1200);
+  queue.add(PointerMoved{{111, 95}}, 1210);
+  queue.add(PointerReleased{{111, 95}}, 1250);
+  while (!queue.empty()) {
+    const FrameInput frame = queue.next_frame();
+    EXPECT_FALSE(frame.pressed || frame.released || frame.down);
+  }
+}
+
+TEST(InputQueue, ATouchThatCameBeforeTheChangeIsDroppedToo) {
+  InputQueue queue;
+  for (const Milliseconds at : {1000, 1080}) {
+    queue.add(PointerPressed{{100, 100}}, at);
+    queue.add(PointerReleased{{100, 100}}, at + 40);
+  }
+  EXPECT_TRUE(queue.next_frame().pressed);
+  EXPECT_TRUE(queue.next_frame().released);
+  queue.screen_changed(1100, 50);
+  const FrameInput frame = queue.next_frame();
+  EXPECT_FALSE(frame.pressed || frame.released);
+  EXPECT_TRUE(queue.empty());
+}
+
+TEST(InputQueue, ATouchElsewhereOrLaterActs) {
+  for (const bool later : {false, true}) {
+    InputQueue queue;
+    queue.add(PointerPressed{{100, 100}}, 1000);
+    queue.add(PointerReleased{{100, 100}}, 1050);
+    queue.next_frame();
+    queue.next_frame();
+    queue.screen_changed(1060, 50);
+    queue.add(PointerPressed{later ? Pixel{100, 100} : Pixel{100, 160}}, later ? 1060 + kSecondTouch_ms : 1100);
+    EXPECT_TRUE(queue.next_frame().pressed) << later;
+  }
+}
+
+TEST(InputQueue, KeysAreNeverDropped) {
+  InputQueue queue;
+  queue.add(PointerPressed{{100, 100}}, 1000);
+  queue.next_frame();
+  queue.add(PointerReleased{{100, 100}}, 1010);
+  queue.next_frame();
+  queue.screen_changed(1020, 50);
+  queue.add(PointerPressed{{100, 100}}, 1030);
+  queue.add(KeyStruck{Key::kEnter}, 1040);
+  queue.add(PointerReleased{{100, 100}}, 1050);
+  EXPECT_EQ(queue.next_frame().key, Key::kEnter);
+}
+
 // Whatever comes, in whatever order: nothing is lost but movement while up, and nothing changes places.
 TEST(InputQueue, KeepsTheOrderOfWhatComesIn) {
   TestRandom random = TestRandom::of_this_run();
