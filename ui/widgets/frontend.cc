@@ -59,7 +59,6 @@ void Frontend::begin(const FrameInput& input) {
     if (gl_) {
       ImGui_ImplOpenGL3_DestroyFontsTexture();
       ImGui_ImplOpenGL3_CreateFontsTexture();
-      io.Fonts->ClearTexData();  // the texture has it
     }
     rebuild_ = false;
   }
@@ -67,7 +66,11 @@ void Frontend::begin(const FrameInput& input) {
   io.DisplaySize = {glass_.width_px, glass_.height_px};
   io.MousePos = {input.pointer.x, input.pointer.y};
   io.MouseDown[0] = input.down;
-  if (gl_) ImGui_ImplOpenGL3_NewFrame();
+  if (gl_) {
+    // Its first call uploads the letters once more; from then on the texture has them.
+    ImGui_ImplOpenGL3_NewFrame();
+    io.Fonts->ClearTexData();
+  }
   ImGui::NewFrame();
 }
 
