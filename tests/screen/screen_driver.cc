@@ -34,34 +34,19 @@ bool whole(const WidgetBox& widget) {
 }  // namespace
 
 ScreenDriver::ScreenDriver(const ScreenWorld& world, const TestGlass& glass, const std::string& file)
-    : environment_(world.environment()), desk_(environment_), test_glass_(glass) {
-  if (!file.empty()) desk_.carry_out(OpenSurvey{file});
-  idle_.changed = true;
+    : environment_(world.environment()), stage_(environment_, [this] { return now_; }), test_glass_(glass) {
+  if (!file.empty()) stage_.open(file);
   settle();
 }
 
 void ScreenDriver::draw() {
   now_ += kFrame_ms;
-  desk_.look_at_the_clock();
-  glass_ = {test_glass_.width_px, test_glass_.height_px, desk_.view().px_per_mm.value_or(test_glass_.px_per_mm())};
-  frontend_.frame(&queue_, glass_, desk_.view().dusk ? dusk_theme() : sun_theme(),
-                  [this](Ui& ui) { draw_screen(ui, desk_.view(), screen_, sink_); });
-  const std::vector<Request> asked = sink_.take();
-  for (const Request& request : asked)
-    desk_.carry_out(request);
-  idle_ = after_frame(idle_, frontend_.unsettled());
-  idle_.changed = !asked.empty();
-  const std::string under = under_the_finger(desk_.view(), screen_);
-  if (under != shown_) queue_.screen_changed(now_, glass_.px(kTarget_mm));
-  shown_ = under;
-  idle_.input_waits = !queue_.empty();
-  idle_.deadline = now_ + desk_.ms_to_midnight();
+  stage_.frame(test_glass_.width_px, test_glass_.height_px, test_glass_.px_per_mm());
   ++frames_;
 }
 
 void ScreenDriver::settle() {
-  idle_.input_waits = !queue_.empty();
-  for (int i = 0; next_step(idle_, now_).next == Next::kDraw; ++i) {
+  for (int i = 0; stage_.next().next == Next::kDraw; ++i) {
     if (i > kMostFrames) throw std::runtime_error("the screen never comes to rest\n" + on_the_glass());
     draw();
   }
@@ -69,13 +54,13 @@ void ScreenDriver::settle() {
 
 void ScreenDriver::set_glass(const TestGlass& glass) {
   test_glass_ = glass;
-  idle_.changed = true;
+  stage_.redraw();
   settle();
 }
 
 std::vector<unsigned char> ScreenDriver::pixels() {
-  frontend_.render();
-  return frontend_.read_pixels();
+  stage_.frontend().render();
+  return stage_.frontend().read_pixels();
 }
 
 void ScreenDriver::press(Pixel at) {
@@ -172,7 +157,7 @@ bool ScreenDriver::drag_area(const std::string& area, float by) {
   const PixelBox box = widget(area).visible;
   const float most = box.height() * 0.45F;
   // A finger goes a little before the content follows.
-  const float sure = by < 0 ? std::min(by, -glass_.px(3) - 2) : std::max(by, glass_.px(3) + 2);
+  const float sure = by < 0 ? std::min(by, -glass().px(3) - 2) : std::max(by, glass().px(3) + 2);
   const Pixel from = box.middle();
   drag(from, {from.x, from.y + std::clamp(sure, -most, most)});
   return widget_lines(log()) != before;
@@ -199,7 +184,7 @@ bool ScreenDriver::look_for(const std::string& path) {
 bool ScreenDriver::move_whole(float towards_y) {
   if (!shows("whole/up")) return false;
   const std::string before = widget_lines(log());
-  tap_at(middle_of(towards_y < glass_.height_px / 2 ? "whole/up" : "whole/down"));
+  tap_at(middle_of(towards_y < glass().height_px / 2 ? "whole/up" : "whole/down"));
   return widget_lines(log()) != before;
 }
 

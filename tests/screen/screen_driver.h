@@ -6,11 +6,8 @@
 #include <string>
 #include <vector>
 
-#include "desk/desk.h"
-#include "idle_policy.h"
-#include "screen.h"
 #include "screen/screen_world.h"
-#include "widgets/frontend.h"
+#include "stage.h"
 
 namespace nearpit::ui {
 
@@ -41,7 +38,7 @@ class ScreenDriver {
   void key(Key key, int times = 1);
   void type(const std::string& utf8);
   // Several events before any frame.
-  void add(const InputEvent& event) { queue_.add(event, now_); }
+  void add(const InputEvent& event) { stage_.add(event); }
   // How long somebody takes before each touch.
   void set_pace(Milliseconds pace) { pace_ = pace; }
   // Draws as long as the idle policy says so.
@@ -51,7 +48,7 @@ class ScreenDriver {
   int touches() const { return touches_; }
   int frames() const { return frames_; }
 
-  const WidgetLog& log() const { return frontend_.log(); }
+  const WidgetLog& log() const { return stage_.frontend().log(); }
   bool shows(const std::string& path) const { return find_widget(log(), path) != nullptr; }
   const WidgetBox& widget(const std::string& path) const;
   Pixel middle_of(const std::string& path) const { return widget(path).visible.middle(); }
@@ -60,18 +57,18 @@ class ScreenDriver {
   const WidgetBox* focused() const;
 
   // For asserts alone.
-  const DeskView& view() const { return desk_.view(); }
-  const MapView& map_view() const { return *screen_.map.view; }
-  PixelBox map_box() const { return screen_.map.box; }
+  const DeskView& view() const { return stage_.view(); }
+  const MapView& map_view() const { return *stage_.screen().map.view; }
+  PixelBox map_box() const { return stage_.screen().map.box; }
 
-  const Glass& glass() const { return glass_; }
+  const Glass& glass() const { return stage_.glass(); }
   void set_glass(const TestGlass& glass);
   // With an OpenGL context that is current.
-  void start_gl() { frontend_.start_gl().value(); }
-  void stop_gl() { frontend_.stop_gl(); }
+  void start_gl() { stage_.frontend().start_gl().value(); }
+  void stop_gl() { stage_.frontend().stop_gl(); }
   // One frame more, as when the window was uncovered.
   void draw_anew() {
-    idle_.changed = true;
+    stage_.redraw();
     settle();
   }
   std::vector<unsigned char> pixels();
@@ -85,17 +82,10 @@ class ScreenDriver {
   std::string on_the_glass() const;
 
   Environment environment_;
-  Frontend frontend_;
-  Desk desk_;
-  ScreenState screen_;
-  Sink sink_;
-  InputQueue queue_;
-  TestGlass test_glass_;
-  Glass glass_;
-  IdleState idle_;
   Milliseconds now_ = 0;
   Milliseconds pace_ = 600;
-  std::string shown_;
+  Stage stage_;
+  TestGlass test_glass_;
   int touches_ = 0;
   int frames_ = 0;
 };

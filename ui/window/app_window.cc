@@ -15,10 +15,7 @@
 #include <thread>
 
 #include "base/numbers.h"
-#include "desk/desk.h"
-#include "idle_policy.h"
-#include "screen.h"
-#include "widgets/frontend.h"
+#include "stage.h"
 
 namespace nearpit::ui {
 namespace {
@@ -136,12 +133,12 @@ bool may_repeat(Key key) { return key != Key::kEnter && key != Key::kEscape; }
 
 class AppWindow {
  public:
-  explicit AppWindow(Environment& environment) : desk_(environment) {}
+  explicit AppWindow(Environment& environment) : stage_(environment, now) {}
   AppWindow(const AppWindow&) = delete;
   AppWindow& operator=(const AppWindow&) = delete;
   ~AppWindow() {
     if (window_ == nullptr) return;
-    frontend_.stop_gl();
+    stage_.frontend().stop_gl();
     glfwDestroyWindow(window_);
   }
 
@@ -151,7 +148,7 @@ class AppWindow {
  private:
   static AppWindow& of(GLFWwindow* window) { return *static_cast<AppWindow*>(glfwGetWindowUserPointer(window)); }
   void take_events();
-  void add(const InputEvent& event) { queue_.add(event, now()); }
+  void add(const InputEvent& event) { stage_.add(event); }
   void measure();
   void draw();
   void tell_widgets() const;
@@ -172,18 +169,13 @@ class AppWindow {
 
   Library library_;
   GLFWwindow* window_ = nullptr;
-  Frontend frontend_;
-  Desk desk_;
-  ScreenState screen_;
-  Sink sink_;
-  InputQueue queue_;
-  Glass glass_;
+  Stage stage_;
+  float width_px_ = 0;
+  float height_px_ = 0;
   double guessed_px_per_mm_ = 96 / 25.4;
   double pixels_x_ = 1;
   double pixels_y_ = 1;
-  IdleState idle_;
   bool repeats_ = false;  // the last key was held down
-  std::string shown_;     // what lies under the finger
 };
 
 Status AppWindow::open() {
@@ -199,8 +191,8 @@ Status AppWindow::open() {
   if (window_ == nullptr) return no_window(last_error());
   glfwMakeContextCurrent(window_);
   glfwSwapInterval(1);
-  NEARPIT_TRY(frontend_.start_gl());
-  if (const std::string& complaint = frontend_.fonts().complaint(); !complaint.empty())
+  NEARPIT_TRY(stage_.frontend().start_gl());
+  if (const std::string& complaint = stage_.frontend().fonts().complaint(); !complaint.empty())
     std::fprintf(stderr, "note: %s\n", complaint.c_str());
   if (monitor != nullptr) {
     int width_mm = 0;
@@ -235,12 +227,12 @@ void AppWindow::take_events() {
     of(window).add(KeyStruck{*own});
   });
   glfwSetCharCallback(window_, [](GLFWwindow* window, unsigned int character) {
-    if (of(window).repeats_ && of(window).screen_.typing.what == TypingFor::kNothing) return;
+    if (of(window).repeats_ && !of(window).stage_.typing()) return;
     of(window).add(CharacterTyped{static_cast<char32_t>(character)});
   });
-  const auto redraw = [](GLFWwindow* window) { of(window).idle_.changed = true; };
+  const auto redraw = [](GLFWwindow* window) { of(window).stage_.redraw(); };
   glfwSetWindowRefreshCallback(window_, redraw);
-  glfwSetFramebufferSizeCallback(window_, [](GLFWwindow* window, int, int) { of(window).idle_.changed = true; });
+  glfwSetFramebufferSizeCallback(window_, [](GLFWwindow* window, int, int) { of(window).stage_.redraw(); });
 }
 
 void AppWindow::measure() {
@@ -254,48 +246,30 @@ void AppWindow::measure() {
     pixels_x_ = static_cast<double>(width) / window_width;
     pixels_y_ = static_cast<double>(height) / window_height;
   }
-  glass_ = {static_cast<float>(width), static_cast<float>(height), desk_.view().px_per_mm.value_or(guessed_px_per_mm_)};
+  width_px_ = static_cast<float>(width);
+  height_px_ = static_cast<float>(height);
 }
 
 void AppWindow::tell_widgets() const {
   const char* path = std::getenv("NEARPIT_WIDGETS");
   if (path == nullptr) return;
   const std::string beside = std::string(path) + ".new";
-  std::ofstream(beside) << widget_lines(frontend_.log());
+  std::ofstream(beside) << widget_lines(stage_.frontend().log());
   std::rename(beside.c_str(), path);
 }
 
 void AppWindow::draw() {
-  desk_.look_at_the_clock();
   measure();
-  if (glass_.width_px < 1 || glass_.height_px < 1) {
-    idle_ = after_frame(idle_, false);
-    return;
-  }
-  frontend_.frame(&queue_, glass_, desk_.view().dusk ? dusk_theme() : sun_theme(),
-                  [this](Ui& ui) { draw_screen(ui, desk_.view(), screen_, sink_); });
-  const std::vector<Request> asked = sink_.take();
-  for (const Request& request : asked)
-    desk_.carry_out(request);
-  idle_ = after_frame(idle_, frontend_.unsettled());
-  idle_.changed = !asked.empty();
-  const std::string under = under_the_finger(desk_.view(), screen_);
-  if (under != shown_) queue_.screen_changed(now(), glass_.px(kTarget_mm));
-  shown_ = under;
-  idle_.input_waits = !queue_.empty();
-  idle_.deadline = now() + desk_.ms_to_midnight();
-  // With more input waiting the next frame shows more; only what stays is shown.
-  if (idle_.input_waits) return;
-  frontend_.render();
+  if (!stage_.frame(width_px_, height_px_, guessed_px_per_mm_)) return;
+  stage_.frontend().render();
   glfwSwapBuffers(window_);
-  if (next_step(idle_, now()).next == Next::kWait) tell_widgets();
+  if (stage_.next().next == Next::kWait) tell_widgets();
 }
 
 void AppWindow::run(const std::string& file, const EndWatch& end) {
-  if (!file.empty()) desk_.carry_out(OpenSurvey{file});
-  idle_.changed = true;
+  if (!file.empty()) stage_.open(file);
   while (glfwWindowShouldClose(window_) == GLFW_FALSE && !end.asked()) {
-    const IdleStep step = next_step(idle_, now());
+    const IdleStep step = stage_.next();
     if (step.next == Next::kDraw) {
       draw();
       glfwPollEvents();
@@ -304,7 +278,6 @@ void AppWindow::run(const std::string& file, const EndWatch& end) {
     } else {
       glfwWaitEvents();
     }
-    idle_.input_waits = !queue_.empty();
   }
 }
 
