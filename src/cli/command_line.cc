@@ -11,18 +11,22 @@
 namespace nearpit::cli {
 namespace {
 
+std::string survey_file_name(const std::string& text) {
+  return text.ends_with(".gpkg") ? std::string() : in_quotes(text) + " doesn't end in .gpkg";
+}
+
 // What stands where a command should.
 std::string no_command(const CLI::App& program) {
   std::vector<std::string> commands;
   for (const CLI::App* command : program.get_subcommands([](const CLI::App*) { return true; }))
     commands.push_back(command->get_name());
-  const std::vector<std::string> found = program.remaining();
+  // A word that is no survey file stood where a command should; else what stands behind a survey file.
+  std::vector<std::string> found = program.get_option("FILE")->results();
+  std::erase_if(found, [](const std::string& text) { return survey_file_name(text).empty(); });
+  for (const std::string& rest : program.remaining())
+    found.push_back(rest);
   return (found.empty() ? "no command" : in_quotes(found.front()) + " is no command") +
          "; legal: " + join(commands, ", ");
-}
-
-std::string survey_file_name(const std::string& text) {
-  return text.ends_with(".gpkg") ? std::string() : in_quotes(text) + " doesn't end in .gpkg";
 }
 
 // One line, and exit 2: wrong usage. Asking for help or the version is none.
