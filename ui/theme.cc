@@ -27,24 +27,30 @@ constexpr std::uint32_t kLamp = 0xF5F0E1;
 
 constexpr std::uint8_t kSeeThrough = 90;
 
-Theme make_sun() {
+// What stands out alike on light and dark.
+Theme shared() {
   Theme theme;
+  theme.chosen = {rgb(kYellow), rgb(kBlack)};
+  theme.warning = {rgb(kOrange), rgb(kBlack)};
+  theme.good = {rgb(kDarkGreen), rgb(kWhite)};
+  theme.due = rgb(kYellow);
+  theme.halted = rgb(kReddishPurple);
+  theme.positive = rgb(kVermillion);
+  theme.cluster = rgb(kSkyBlue, kSeeThrough);
+  return theme;
+}
+
+Theme make_sun() {
+  Theme theme = shared();
   theme.ground = {rgb(kPaper), rgb(kBlack)};
   theme.map = {rgb(kWhite), rgb(kBlack)};
   theme.key = {rgb(kSand), rgb(kBlack)};
   theme.primary = {rgb(kDarkBlue), rgb(kWhite)};
-  theme.chosen = {rgb(kYellow), rgb(kBlack)};
-  theme.warning = {rgb(kOrange), rgb(kBlack)};
-  theme.good = {rgb(kDarkGreen), rgb(kWhite)};
   theme.quiet = rgb(0x3A3A3A);
   theme.line = rgb(0x1A1A1A);
   theme.focus = rgb(kBlue);
   theme.pressed = rgb(kBlack, 60);
-  theme.due = rgb(kYellow);
-  theme.halted = rgb(kReddishPurple);
-  theme.positive = rgb(kVermillion);
   theme.open_mark = rgb(kWhite);
-  theme.cluster = rgb(kSkyBlue, kSeeThrough);
   theme.outline = rgb(kBlack);
   theme.area_line = rgb(0x4A4A4A);
   theme.hatch = rgb(0x7A7468);
@@ -52,23 +58,16 @@ Theme make_sun() {
 }
 
 Theme make_dusk() {
-  Theme theme;
+  Theme theme = shared();
   theme.ground = {rgb(kNight), rgb(kLamp)};
   theme.map = {rgb(0x000000), rgb(kLamp)};
   theme.key = {rgb(kSlate), rgb(kLamp)};
   theme.primary = {rgb(kSkyBlue), rgb(kBlack)};
-  theme.chosen = {rgb(kYellow), rgb(kBlack)};
-  theme.warning = {rgb(kOrange), rgb(kBlack)};
-  theme.good = {rgb(kDarkGreen), rgb(kWhite)};
   theme.quiet = rgb(0xC9C4B6);
   theme.line = rgb(0xD9D4C6);
   theme.focus = rgb(kSkyBlue);
   theme.pressed = rgb(kWhite, 60);
-  theme.due = rgb(kYellow);
-  theme.halted = rgb(kReddishPurple);
-  theme.positive = rgb(kVermillion);
   theme.open_mark = rgb(0x000000);
-  theme.cluster = rgb(kSkyBlue, kSeeThrough);
   theme.outline = rgb(kLamp);
   theme.area_line = rgb(0xA8A393);
   theme.hatch = rgb(0x8A8474);

@@ -39,6 +39,9 @@ std::optional<CodePoint> decode(std::string_view text) {
   return CodePoint{value, size};
 }
 
+// A byte behind the first of a sequence.
+bool continues(char c) { return (static_cast<unsigned char>(c) & 0xC0U) == 0x80U; }
+
 // Also the two separators that break a line wherever they are shown.
 bool is_control(char32_t c) { return c < 0x20 || (c >= 0x7F && c <= 0x9F) || c == 0x2028 || c == 0x2029; }
 
@@ -132,8 +135,38 @@ bool is_utf8(std::string_view text) {
 }
 
 std::size_t utf8_length(std::string_view text) {
-  return static_cast<std::size_t>(
-      std::count_if(text.begin(), text.end(), [](char c) { return (static_cast<unsigned char>(c) & 0xC0U) != 0x80U; }));
+  return static_cast<std::size_t>(std::count_if(text.begin(), text.end(), [](char c) { return !continues(c); }));
+}
+
+std::u32string characters(std::string_view text) {
+  std::u32string all;
+  while (!text.empty()) {
+    const std::optional<CodePoint> c = decode(text);
+    if (c) all += c->value;
+    text.remove_prefix(c ? c->size : 1);
+  }
+  return all;
+}
+
+std::string utf8(char32_t character) {
+  const auto tail = [&](int shift) { return static_cast<char>(0x80U | ((character >> shift) & 0x3FU)); };
+  if (character < 0x80) return {static_cast<char>(character)};
+  if (character < 0x800) return {static_cast<char>(0xC0U | character >> 6), tail(0)};
+  if (character < 0x10000) return {static_cast<char>(0xE0U | character >> 12), tail(6), tail(0)};
+  return {static_cast<char>(0xF0U | character >> 18), tail(12), tail(6), tail(0)};
+}
+
+std::size_t character_before(std::string_view text, std::size_t at) {
+  while (at > 0 && continues(text[--at])) {
+  }
+  return at;
+}
+
+std::size_t character_after(std::string_view text, std::size_t at) {
+  if (at < text.size()) ++at;
+  while (at < text.size() && continues(text[at]))
+    ++at;
+  return at;
 }
 
 bool is_name(std::string_view text, std::size_t most) { return is_phrase(text, most, false); }
@@ -147,9 +180,7 @@ std::string fold_case(std::string_view text) {
     if (c && c->size == 1 && between(c->value, 'A', 'Z')) {
       folded[i] = static_cast<char>(c->value + 0x20);
     } else if (c && c->size == 2) {
-      const char32_t to = fold(c->value);
-      folded[i] = static_cast<char>(0xC0U | to >> 6U);
-      folded[i + 1] = static_cast<char>(0x80U | (to & 0x3FU));
+      folded.replace(i, 2, utf8(fold(c->value)));
     }
     i += c ? c->size : 1;
   }
@@ -166,6 +197,10 @@ std::string in_quotes(std::string_view text) {
     text.remove_prefix(c ? c->size : 1);
   }
   return out + "\"";
+}
+
+std::string counted(std::size_t number, const std::string& one, const std::string& many) {
+  return std::to_string(number) + " " + (number == 1 ? one : many);
 }
 
 std::string list_in_words(const std::vector<std::string>& words, std::string_view last_joint) {

@@ -14,10 +14,6 @@ constexpr int kDigits = 3;
 
 std::string figure(double value) { return format_significant(value, kDigits); }
 
-std::string counted(std::size_t number, const std::string& one, const std::string& many) {
-  return std::to_string(number) + " " + (number == 1 ? one : many);
-}
-
 std::string progress_text(const Progress& progress) {
   std::string text = "Grid pits      " + std::to_string(progress.first_sample_dug) + " of " +
                      std::to_string(progress.first_sample) + " recorded\n";

@@ -15,7 +15,6 @@ namespace {
 constexpr const char* kName = "window.json";
 constexpr std::size_t kMostBytes = 1u << 20;
 constexpr std::size_t kMostPath = 4096;
-constexpr std::size_t kMostCrew = 200;
 constexpr std::size_t kMostSurveys = 500;
 constexpr std::size_t kMostId = 100;
 

@@ -12,6 +12,7 @@
 namespace nearpit {
 
 constexpr std::size_t kMostRecent = 12;
+constexpr std::size_t kMostCrew = 200;  // code points of a crew's name
 constexpr double kLeastPxPerMm = 1;
 constexpr double kMostPxPerMm = 40;
 

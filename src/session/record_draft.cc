@@ -6,11 +6,11 @@
 #include "base/numbers.h"
 #include "base/text.h"
 #include "session/blank_fields.h"
+#include "session/preferences.h"
 
 namespace nearpit {
 namespace {
 
-constexpr std::size_t kMostCrew = 200;
 constexpr std::int64_t kMostCount = 1'000'000;  // as a table of pits takes it
 constexpr std::int64_t kMostStepped = 999'999;
 constexpr double kDeepest_cm = 1000;
@@ -263,6 +263,12 @@ bool typed_anything(const RecordDraft& draft, const SurveyModel& model) {
   blank.started_at = typed.started_at;
   blank.judgement = typed.judgement;
   return !(typed == blank);
+}
+
+bool typed_beside_why(const RecordDraft& draft, const SurveyModel& model) {
+  RecordDraft rest = draft;
+  rest.why.clear();
+  return typed_anything(rest, model);
 }
 
 bool overtaken(const RecordDraft& draft, const SurveyModel& model) {

@@ -48,6 +48,9 @@ RecordDraft new_draft(const SurveyModel& model, const PitName& pit, const WallTi
 // Something was typed that would be lost: the draft differs from what new_draft would give. started_at, judgement and what the draft is based on don't count.
 bool typed_anything(const RecordDraft& draft, const SurveyModel& model);
 
+// The same, the reason for a change aside.
+bool typed_beside_why(const RecordDraft& draft, const SurveyModel& model);
+
 // Somebody wrote of the pit since the draft was filled (another program, another tablet's file; or a crash came between a save and the removal of its
 // draft: then typed_anything says that nothing would be lost).
 bool overtaken(const RecordDraft& draft, const SurveyModel& model);

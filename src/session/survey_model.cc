@@ -10,8 +10,6 @@
 namespace nearpit {
 namespace {
 
-constexpr std::size_t kLongestFreeLabel = 40;
-
 TimeZone zone_of(const Plan& plan) {
   auto zone = TimeZone::named(plan.time_zone);  // the plan's reader has checked the name
   return zone ? *zone : TimeZone::utc();

@@ -24,6 +24,8 @@ struct PitName {
   std::string label;      // as the plan writes it, or the free label
 };
 
+constexpr std::size_t kLongestFreeLabel = 40;  // code points
+
 class SurveyModel {
  public:
   SurveyModel(Plan plan, std::unique_ptr<const SurveyGround> ground);

@@ -37,6 +37,8 @@ class DigList {
   // Only for nodes of the design.
   std::int32_t ring(NodeId id) const { return ring_[index(id)]; }
   bool closed(NodeId id) const { return closed_ground_[index(id)] + closed_access_[index(id)] > 0; }
+  // Within a stop-work that is not lifted, in the design or not.
+  bool near_stop_work(NodeId id) const { return halts_[index(id)] > 0; }
   // Halted: in the design, without a record, within a stop-work that is not lifted, and not in a closed area (there it counts
   // as not dug).
   bool halted(NodeId id) const;

@@ -114,14 +114,29 @@ const PitEntry* Survey::off_grid(const std::string& label) const {
   return found == off_grid_.end() ? nullptr : &found->second;
 }
 
+bool Survey::opens_on_request(NodeId id) const {
+  const PitEntry* entry = pit(id);
+  return entry != nullptr && entry->record().opens_neighbours && !list_.in_design(id) &&
+         list_.state(id) == PitState::kPositive;
+}
+
+bool Survey::may_be_asked_for(NodeId id) const {
+  return !list_.in_design(id) && list_.state(id) == PitState::kNoRecord && !list_.closed(id);
+}
+
+bool Survey::asked_for(NodeId id) const {
+  if (!may_be_asked_for(id)) return false;
+  bool asked = false;  // pits open one another both ways
+  ground_->each_opened(id, [&](NodeId other) { asked = asked || opens_on_request(other); });
+  return asked;
+}
+
 std::vector<NodeId> Survey::asked() const {
   std::vector<NodeId> asked;
   for (const auto& [id, entry] : pits_) {
-    if (!entry.record().opens_neighbours || list_.in_design(id) || list_.state(id) != PitState::kPositive) continue;
+    if (!opens_on_request(id)) continue;
     ground_->each_opened(id, [&](NodeId other) {
-      if (!list_.in_design(other) && list_.state(other) == PitState::kNoRecord && !list_.closed(other)) {
-        asked.push_back(other);
-      }
+      if (may_be_asked_for(other)) asked.push_back(other);
     });
   }
   std::sort(asked.begin(), asked.end());

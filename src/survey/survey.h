@@ -68,10 +68,14 @@ class Survey {
   const std::map<std::string, StopWork>& stop_works() const { return stops_; }
   // Nodes that a closed area holds, ascending.
   std::vector<NodeId> nodes_in(const ClosedArea& area) const;
+  // Whether asked() holds the pit.
+  bool asked_for(NodeId id) const;
   // Pits that judgement positives opened because the crew asked for it, without record and not in the design; ascending.
   std::vector<NodeId> asked() const;
 
  private:
+  bool opens_on_request(NodeId id) const;
+  bool may_be_asked_for(NodeId id) const;
   void mark_closed(const ClosedArea& area, int change, std::vector<NodeId>* changed);
 
   std::unique_ptr<const SurveyGround> ground_;

@@ -196,5 +196,34 @@ TEST(Text, Lists) {
   EXPECT_EQ(join({"a", "", "c"}, "|"), "a||c");
 }
 
+TEST(Text, CountsKnowOneFromMany) {
+  EXPECT_EQ(counted(0, "pit", "pits"), "0 pits");
+  EXPECT_EQ(counted(1, "pit", "pits"), "1 pit");
+  EXPECT_EQ(counted(2, "pit", "pits"), "2 pits");
+}
+
+TEST(Text, CharactersAndUtf8AreInverse) {
+  for (const char32_t c : {U'a', U'\u00E9', U'\u20AC', U'\U0001F642'}) {
+    EXPECT_EQ(utf8(c), encoded(c));
+    EXPECT_EQ(characters("x" + encoded(c) + "y"), (std::u32string{U'x', c, U'y'}));
+  }
+  EXPECT_EQ(characters("a\xFF\xE2"
+                       "b"),
+            U"ab")
+      << "bytes that belong to none are left out";
+}
+
+TEST(Text, CharactersAreSteppedOverWhole) {
+  const std::string text = "a" + encoded(0xE9) + encoded(0x20AC) + encoded(0x1F642);
+  std::vector<std::size_t> ends{0};
+  while (ends.back() < text.size())
+    ends.push_back(character_after(text, ends.back()));
+  EXPECT_EQ(ends, (std::vector<std::size_t>{0, 1, 3, 6, 10}));
+  for (std::size_t i = 1; i < ends.size(); ++i)
+    EXPECT_EQ(character_before(text, ends[i]), ends[i - 1]);
+  EXPECT_EQ(character_before(text, 0), 0U);
+  EXPECT_EQ(character_after(text, text.size()), text.size());
+}
+
 }  // namespace
 }  // namespace nearpit

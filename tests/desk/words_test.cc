@@ -35,12 +35,6 @@ TEST(Words, StepsOut) {
   EXPECT_EQ(steps_out(12), "12 steps out");
 }
 
-TEST(Words, CountsKnowOneFromMany) {
-  EXPECT_EQ(counted(0, "pit", "pits"), "0 pits");
-  EXPECT_EQ(counted(1, "pit", "pits"), "1 pit");
-  EXPECT_EQ(counted(2, "pit", "pits"), "2 pits");
-}
-
 WallTime at(const std::string& text) { return parse_time(text, TimeZone::utc())->time; }
 
 TEST(Words, WhenSaysNoMoreThanIsNeeded) {

@@ -93,13 +93,6 @@ class Tour {
   }
   void measure(const ScreenWorld& world) const { world.measured(glass_.px_per_mm(), dusk_); }
   void see(ScreenDriver& screen, const std::string& card) { guest_.sees(screen, card); }
-  static void choose_on_map(ScreenDriver& screen, const std::string& label) {
-    if (screen.shows("strip/map") && !screen.widget("strip/map").chosen) screen.tap("strip/map");
-    const SurveyModel& model = *screen.view().survey->model;
-    const Point place = model.survey().ground().frame.ground(model.name_of(label)->node);
-    screen.tap_at(to_screen(screen.map_view(), screen.map_box(), place));
-  }
-
   void start_cards() {
     ScreenWorld world;
     world.measured(0, dusk_);
@@ -160,7 +153,7 @@ class Tour {
       screen.tap("dig-list/grid-pits-first");
       see(screen, "dig list, grid pits first");
       screen.tap("dig-list/grid-pits-first");
-      choose_on_map(screen, "T7-7");
+      screen.tap_pit("T7-7");
       see(screen, "dig list, a pit chosen on the map");
       screen.tap("strip/clusters");
       see(screen, "clusters");
@@ -175,7 +168,7 @@ class Tour {
       screen.tap_all({"typing/leave", "office/keys"});
       see(screen, "keys");
       screen.tap("keys/back");
-      choose_on_map(screen, "T5-5");
+      screen.tap_pit("T5-5");
       see(screen, "map, a positive pit chosen");
       if (screen.shows("map/history")) {
         screen.tap("map/history");
@@ -197,7 +190,7 @@ class Tour {
       screen.tap("record/more/drop");
       see(screen, "record, more, about to forget");
       screen.tap("record/more/drop");
-      choose_on_map(screen, "T5-5");
+      screen.tap_pit("T5-5");
       screen.tap_all({"map/record-chosen", "record/more"});
       see(screen, "record, more, recorded");
       screen.tap("record/more/move");

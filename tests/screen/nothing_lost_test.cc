@@ -14,16 +14,6 @@ class NothingLost : public testing::Test {
  protected:
   NothingLost() { world.measured(TestGlass{}.px_per_mm()); }
 
-  static void choose(ScreenDriver& screen, const std::string& pit) {
-    const auto name = screen.view().survey->model->name_of(pit);
-    const Point place = screen.view().survey->model->survey().ground().frame.ground(name->node);
-    screen.tap_at(to_screen(screen.map_view(), screen.map_box(), place));
-  }
-  static void open(ScreenDriver& screen, const std::string& pit) {
-    choose(screen, pit);
-    screen.tap("map/record-chosen");
-  }
-
   ScreenWorld world;
 };
 
@@ -32,14 +22,14 @@ TEST_F(NothingLost, AnotherPitOpenedFromTheMapLeavesThisOneHalfWritten) {
   {
     ScreenDriver screen(world, {}, file);
     screen.tap_all({"dig-list/record", "record/digits/7"});
-    open(screen, "T3-3");
+    screen.open_pit("T3-3");
     screen.tap_all({"record/digits/5", "record/back"});
     EXPECT_THAT(screen.said("dig-list/T1-1"), HasSubstr("half written"));
   }
   ScreenDriver again(world, {}, file);
-  open(again, "T1-1");
+  again.open_pit("T1-1");
   EXPECT_THAT(again.said("record/find-0/count"), HasSubstr("7"));
-  open(again, "T3-3");
+  again.open_pit("T3-3");
   EXPECT_THAT(again.said("record/find-0/count"), HasSubstr("5"));
 }
 
@@ -47,24 +37,24 @@ TEST_F(NothingLost, AHalfTypedChangeKeepsTheRecordFromBeingMovedOrWithdrawn) {
   const std::string file = world.make();
   ScreenDriver screen(world, {}, file);
   screen.tap_all({"dig-list/record", "record/digits/3", "record/save"});
-  open(screen, "T1-1");
+  screen.open_pit("T1-1");
   screen.tap_all({"record/digits/9", "record/more"});
   EXPECT_FALSE(screen.shows("record/more/move"));
   EXPECT_FALSE(screen.shows("record/more/withdraw"));
   screen.tap_all({"record/back", "record/back", "strip/day"});
-  open(screen, "T1-1");
+  screen.open_pit("T1-1");
   EXPECT_THAT(screen.said("record/find-0/count"), HasSubstr("9"));
 }
 
 TEST_F(NothingLost, APitThatSomebodyElseRecordsMeanwhileCanStillBeSavedWithAReason) {
   const std::string file = world.make();
   ScreenDriver screen(world, {}, file);
-  open(screen, "T3-3");
+  screen.open_pit("T3-3");
   screen.tap_all({"record/digits/5", "record/back"});
   world.write_elsewhere(file, "T3-3", 1);
-  open(screen, "T1-1");
+  screen.open_pit("T1-1");
   screen.tap_all({"record/nothing-found", "record/save"});  // brings the news in
-  open(screen, "T3-3");
+  screen.open_pit("T3-3");
   EXPECT_THAT(screen.said("notice"), HasSubstr("recorded by somebody else"));
   screen.tap("notice/understood");
   EXPECT_THAT(screen.said("record/find-0/count"), HasSubstr("5"));
@@ -85,7 +75,7 @@ TEST_F(NothingLost, AReasonForARefusedWithdrawalIsKept) {
   const std::string file = world.make();
   ScreenDriver screen(world, {}, file);
   screen.tap_all({"dig-list/record", "record/digits/3", "record/save"});
-  open(screen, "T1-1");
+  screen.open_pit("T1-1");
   world.write_elsewhere(file, "T1-1", 4);
   screen.tap_all({"record/more", "record/more/withdraw"});
   screen.type("typed on the wrong line");
@@ -112,15 +102,15 @@ TEST_F(NothingLost, TheMovePanelMeansOnlyAPitTouchedSinceItWasOpened) {
   const std::string file = world.make();
   ScreenDriver screen(world, {}, file);
   screen.tap_all({"dig-list/record", "record/digits/3", "record/save"});
-  open(screen, "T1-1");
-  choose(screen, "T3-3");
+  screen.open_pit("T1-1");
+  screen.tap_pit("T3-3");
   screen.tap_all({"record/more", "record/more/move"});
   EXPECT_THAT(screen.said("record/move"), Not(HasSubstr("T3-3")));
-  choose(screen, "T3-3");
+  screen.tap_pit("T3-3");
   EXPECT_THAT(screen.said("record/move"), HasSubstr("It was T3-3"));
   screen.tap_all({"record/move/why", "typing/phrase/0", "typing/done", "record/move/do"});
   // The next record opens on its rows, not where the last one was left.
-  open(screen, "T1-1");
+  screen.open_pit("T1-1");
   EXPECT_TRUE(screen.shows("record/save"));
   EXPECT_EQ(screen.view().survey->draft->why, "");
 }
@@ -129,7 +119,7 @@ TEST_F(NothingLost, AHalfTypedChangeOfARecordStandsOnTheList) {
   const std::string file = world.make();
   ScreenDriver screen(world, {}, file);
   screen.tap_all({"dig-list/record", "record/digits/3", "record/save"});
-  open(screen, "T1-1");
+  screen.open_pit("T1-1");
   screen.tap_all({"record/digits/8", "record/back"});
   EXPECT_THAT(screen.said("dig-list/T1-1"), HasSubstr("half written"));
   screen.tap("dig-list/T1-1");
@@ -142,9 +132,9 @@ TEST_F(NothingLost, TwoWindowsKeepEachOthersDrafts) {
     ScreenDriver one(world, {}, file);
     one.tap_all({"dig-list/record", "record/digits/7", "record/back"});
     ScreenDriver other(world, {}, file);
-    open(one, "T5-5");
+    one.open_pit("T5-5");
     one.tap_all({"record/digits/1", "record/back"});
-    open(other, "T3-3");
+    other.open_pit("T3-3");
     other.tap_all({"record/digits/2", "record/back"});
   }
   ScreenDriver again(world, {}, file);

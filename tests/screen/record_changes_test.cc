@@ -13,16 +13,6 @@ class RecordChanges : public testing::Test {
  protected:
   RecordChanges() { world.measured(TestGlass().px_per_mm()); }
 
-  // The place of a node of the survey on the map.
-  static Pixel on_map(const ScreenDriver& screen, const std::string& label) {
-    const SurveyModel& model = *screen.view().survey->model;
-    const Point place = model.survey().ground().frame.ground(model.name_of(label)->node);
-    return to_screen(screen.map_view(), screen.map_box(), place);
-  }
-  static void open_from_map(ScreenDriver& screen, const std::string& label) {
-    screen.tap_at(on_map(screen, label));
-    screen.tap("map/record-chosen");
-  }
   static void record_negative(ScreenDriver& screen) {
     screen.tap_all({"dig-list/record", "record/nothing-found", "record/save"});
   }
@@ -94,7 +84,7 @@ TEST_F(RecordChanges, AReasonOfBlanksIsNone) {
   const std::string file = world.make();
   ScreenDriver screen(world, {}, file);
   record_negative(screen);
-  open_from_map(screen, "T1-1");
+  screen.open_pit("T1-1");
   screen.tap_all(
       {"record/more", "record/more/withdraw", "typing/letters/space", "typing/letters/space", "typing/done"});
   EXPECT_EQ(world.read(file).revision(), 1);
@@ -103,7 +93,7 @@ TEST_F(RecordChanges, AReasonOfBlanksIsNone) {
 TEST_F(RecordChanges, ANodeThatIsNotDueBecomesAJudgementPitAndOpensNeighboursOnRequest) {
   const std::string file = world.make();
   ScreenDriver screen(world, {}, file);
-  open_from_map(screen, "T2-4");
+  screen.open_pit("T2-4");
   EXPECT_THAT(screen.said("record"), HasSubstr("judgement"));
   screen.tap_all({"record/find-0/more", "record/save"});
   {
@@ -112,7 +102,7 @@ TEST_F(RecordChanges, ANodeThatIsNotDueBecomesAJudgementPitAndOpensNeighboursOnR
     EXPECT_EQ(world.record(session, "T2-4")->chosen_by, ChosenBy::kJudgement);
     EXPECT_EQ(session.model().survey().dig_list().due().size(), 3U);
   }
-  open_from_map(screen, "T2-4");
+  screen.open_pit("T2-4");
   screen.tap_all({"record/more", "record/more/neighbours", "typing/phrase/0", "typing/done"});
   Session session = world.read(file);
   EXPECT_FALSE(session.model().survey().asked().empty());
@@ -133,7 +123,7 @@ TEST_F(RecordChanges, ARecordIsChangedWithWhyAndTheFirstStaysInTheHistory) {
   const std::string file = world.make();
   ScreenDriver screen(world, {}, file);
   screen.tap_all({"dig-list/record", "record/find-0/more", "record/save"});
-  open_from_map(screen, "T1-1");
+  screen.open_pit("T1-1");
   screen.tap_all({"record/find-0/more", "record/find-1/more"});
   EXPECT_THAT(screen.said("record/save"), HasSubstr("why"));
   screen.tap("record/save");
@@ -142,7 +132,7 @@ TEST_F(RecordChanges, ARecordIsChangedWithWhyAndTheFirstStaysInTheHistory) {
   Session session = world.read(file);
   EXPECT_EQ(session.revision(), 2);
   EXPECT_EQ(world.record(session, "T1-1")->counts, (std::vector<std::uint32_t>{2, 1, 0}));
-  open_from_map(screen, "T1-1");
+  screen.open_pit("T1-1");
   screen.tap_all({"record/more", "record/more/history"});
   const std::string history = screen.said("record/history");
   EXPECT_THAT(history, HasSubstr("flake 2, sherd 1"));
@@ -155,7 +145,7 @@ TEST_F(RecordChanges, ARecordIsWithdrawnWithWhyAndThePitIsDueAgain) {
   const std::string file = world.make();
   ScreenDriver screen(world, {}, file);
   record_negative(screen);
-  open_from_map(screen, "T1-1");
+  screen.open_pit("T1-1");
   screen.tap_all({"record/more", "record/more/withdraw", "typing/done"});
   EXPECT_NE(world.record(world.read(file), "T1-1"), nullptr) << "withdrawn without a reason";
   if (!screen.shows("record/more/withdraw")) screen.tap("record/more");
@@ -173,9 +163,9 @@ TEST_F(RecordChanges, ARecordBelongsToAnotherPitThatIsTouchedOnTheMap) {
   const std::string file = world.make();
   ScreenDriver screen(world, {}, file);
   screen.tap_all({"dig-list/record", "record/find-0/more", "record/save"});
-  open_from_map(screen, "T1-1");
+  screen.open_pit("T1-1");
   screen.tap_all({"record/more", "record/more/move"});
-  screen.tap_at(on_map(screen, "T3-3"));
+  screen.tap_pit("T3-3");
   EXPECT_THAT(screen.said("record/move"), HasSubstr("T3-3"));
   screen.tap_all({"record/move/why", "typing/phrase/0", "typing/done", "record/move/do"});
   Session session = world.read(file);
@@ -188,7 +178,7 @@ TEST_F(RecordChanges, ARecordBelongsToAnotherPitWhoseLabelIsTyped) {
   const std::string file = world.make();
   ScreenDriver screen(world, {}, file);
   record_negative(screen);
-  open_from_map(screen, "T1-1");
+  screen.open_pit("T1-1");
   screen.tap_all({"record/more", "record/more/move", "record/move/other"});
   screen.type("T5-5");
   screen.tap_all({"typing/done", "record/move/why"});
@@ -205,7 +195,7 @@ TEST_F(RecordChanges, APitThatIsNotThereIsSaidAndWhatWasTypedStays) {
   const std::string file = world.make();
   ScreenDriver screen(world, {}, file);
   record_negative(screen);
-  open_from_map(screen, "T1-1");
+  screen.open_pit("T1-1");
   screen.tap_all({"record/more", "record/more/move", "record/move/other"});
   screen.type("T99-5");
   screen.tap_all({"typing/done", "record/move/why", "typing/phrase/1", "typing/done", "record/move/do"});

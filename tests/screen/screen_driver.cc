@@ -4,6 +4,8 @@
 #include <cmath>
 #include <stdexcept>
 
+#include "base/text.h"
+
 namespace nearpit::ui {
 namespace {
 
@@ -11,20 +13,6 @@ constexpr Milliseconds kFrame_ms = 17;
 constexpr int kMostFrames = 400;
 constexpr int kMostDrags = 80;
 constexpr int kDragSteps = 5;
-
-std::u32string characters(const std::string& utf8) {
-  std::u32string all;
-  for (std::size_t at = 0; at < utf8.size();) {
-    const auto first = static_cast<unsigned char>(utf8[at]);
-    const std::size_t length = first >= 0xF0 ? 4 : first >= 0xE0 ? 3 : first >= 0xC0 ? 2 : 1;
-    char32_t value = length == 1 ? first : first & (0xFFU >> (length + 1));
-    for (std::size_t i = 1; i < length; ++i)
-      value = value << 6 | (static_cast<unsigned char>(utf8[at + i]) & 0x3FU);
-    all += value;
-    at += length;
-  }
-  return all;
-}
 
 bool whole(const WidgetBox& widget) {
   return !widget.visible.empty() && widget.visible.height() > widget.box.height() - 1 &&
@@ -61,6 +49,21 @@ void ScreenDriver::set_glass(const TestGlass& glass) {
 std::vector<unsigned char> ScreenDriver::pixels() {
   stage_.frontend().render();
   return stage_.frontend().read_pixels();
+}
+
+Pixel ScreenDriver::on_map(const std::string& pit) const {
+  const SurveyModel& model = *view().survey->model;
+  return to_screen(map_view(), map_box(), model.survey().ground().frame.ground(model.name_of(pit)->node));
+}
+
+void ScreenDriver::tap_pit(const std::string& pit) {
+  if (shows("strip/map") && !widget("strip/map").chosen) tap("strip/map");
+  tap_at(on_map(pit));
+}
+
+void ScreenDriver::open_pit(const std::string& pit) {
+  tap_pit(pit);
+  tap("map/record-chosen");
 }
 
 void ScreenDriver::press(Pixel at) {

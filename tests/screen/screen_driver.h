@@ -29,6 +29,10 @@ class ScreenDriver {
   void tap_at(Pixel at);
   // A tap at each, in this order.
   void tap_all(const std::vector<std::string>& paths);
+  // Where a pit of the grid lies on the map; a tap there, the map brought to the front on a narrow glass; its record opened from there.
+  Pixel on_map(const std::string& pit) const;
+  void tap_pit(const std::string& pit);
+  void open_pit(const std::string& pit);
   void press(Pixel at);
   void move(Pixel to);
   void release(Pixel at);

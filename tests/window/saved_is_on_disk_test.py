@@ -9,8 +9,8 @@ import unittest
 from pathlib import Path
 
 sys.path.insert(0, str(Path(__file__).resolve().parent))
-from window_runner import Screen, Window
-from survey_runner import Bench, rectangle, small_plan
+from window_runner import OnSmallGlass
+from survey_runner import rectangle, small_plan
 
 FILE = "survey.gpkg"
 PITS = 15
@@ -22,16 +22,9 @@ def long_list():
     return small_plan(initial={"draw": "pits", "count": {"all": 30}, "seed": 3}, boundary=rectangle(0, 0, 60, 50))
 
 
-class SavedIsOnDisk(unittest.TestCase):
+class SavedIsOnDisk(OnSmallGlass):
     def setUp(self):
-        self.bench = Bench()
-        self.addCleanup(self.bench.close)
-        self.screen = Screen(1024, 600)
-        self.screen.__enter__()
-        self.addCleanup(self.screen.__exit__)
-        self.window = Window(self.screen, self.bench)
-        self.addCleanup(self.window.close)
-        self.window.remember(px_per_mm=4.7)
+        super().setUp()
         self.bench.new(long_list())
 
     def in_file(self):

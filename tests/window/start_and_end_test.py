@@ -8,21 +8,10 @@ import unittest
 from pathlib import Path
 
 sys.path.insert(0, str(Path(__file__).resolve().parent))
-from window_runner import Screen, Window
-from survey_runner import Bench
+from window_runner import OnSmallGlass
 
 
-class StartAndEnd(unittest.TestCase):
-    def setUp(self):
-        self.bench = Bench()
-        self.addCleanup(self.bench.close)
-        self.screen = Screen(1024, 600)
-        self.screen.__enter__()
-        self.addCleanup(self.screen.__exit__)
-        self.window = Window(self.screen, self.bench)
-        self.addCleanup(self.window.close)
-        self.window.remember(px_per_mm=4.7)
-
+class StartAndEnd(OnSmallGlass):
     def refused(self, file, said):
         """The window opens all the same, says what is wrong with the file, and is of use after that."""
         window = self.window

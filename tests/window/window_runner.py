@@ -15,11 +15,12 @@ import signal
 import subprocess
 import sys
 import time
+import unittest
 from collections import namedtuple
 from pathlib import Path
 
 sys.path.insert(0, str(Path(__file__).resolve().parents[1] / "cli"))
-from survey_runner import NEARPIT  # noqa: E402
+from survey_runner import NEARPIT, Bench  # noqa: E402
 
 PATIENCE_S = 30  # only a failing test waits so long
 POLL_S = 0.002
@@ -304,3 +305,17 @@ class Window:
         """The same by the typing card's own keys."""
         for letter in text:
             self.click("typing/letters/" + {" ": "space"}.get(letter, letter))
+
+
+class OnSmallGlass(unittest.TestCase):
+    """A bench, and a window on a screen of 1024 x 600 whose millimetre is known."""
+
+    def setUp(self):
+        self.bench = Bench()
+        self.addCleanup(self.bench.close)
+        self.screen = Screen(1024, 600)
+        self.screen.__enter__()
+        self.addCleanup(self.screen.__exit__)
+        self.window = Window(self.screen, self.bench)
+        self.addCleanup(self.window.close)
+        self.window.remember(px_per_mm=4.7)

@@ -2,6 +2,7 @@
 
 #include <string>
 
+#include "base/text.h"
 #include "desk/words.h"
 #include "widgets/paged_list.h"
 
@@ -19,9 +20,7 @@ void proposed_pit(Ui& ui, PixelBox box, const SurveyView& survey, Sink& sink) {
   const float label_width = ui.text_width(pit.label, TextSize::kLarge);
   ui.text(cut_left(&head, std::min(label_width + 1, head.width()), ui.mm(kGap_mm)), pit.label,
           {.size = TextSize::kLarge, .shorten = true});
-  std::string why = pit.because;
-  if (!pit.ring.empty()) why += ", " + pit.ring;
-  ui.text(head, why, {.lines = 2, .shorten = true});
+  ui.text(head, pit.why(), {.lines = 2, .shorten = true});
   ui.text(cut_top(&box, ui.mm(line_mm(TextSize::kBase))), place, {.shorten = true});
   const std::string verb = pit.half_written ? "Go on with " : "Record ";
   if (ui.button("record", button, verb + pit.label,
@@ -56,9 +55,7 @@ void due_row(Ui& ui, const PixelBox& box, const DueRow& row, bool chosen, RowKin
   } else {
     ui.text(label, row.label, {.tone = tone, .shorten = true});
   }
-  std::string why = row.because;
-  if (!row.ring.empty()) why += ", " + row.ring;
-  ui.text(cut_top(&inside, inside.height() / 2), why, {.size = TextSize::kSmall, .tone = tone, .shorten = true});
+  ui.text(cut_top(&inside, inside.height() / 2), row.why(), {.size = TextSize::kSmall, .tone = tone, .shorten = true});
   ui.text(inside, asked ? "judgement pit" : row.walk, {.size = TextSize::kSmall, .tone = tone, .shorten = true});
 }
 

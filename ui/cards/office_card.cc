@@ -2,6 +2,7 @@
 
 #include <string>
 
+#include "session/preferences.h"
 #include "widgets/paged_list.h"
 
 namespace nearpit::ui {
@@ -26,7 +27,7 @@ void office_card(Ui& ui, const PixelBox& box, const DeskView& desk, OfficeState&
     }
     if (ui.button("crew-name", next(), survey.crew.empty() ? "Who is at work?" : "Another name than " + survey.crew,
                   {.align = Align::kLeft, .shorten = true})) {
-      begin_typing(&typing, TypingFor::kCrew, "Crew, or who keeps the record", survey.crew, {}, 200);
+      begin_typing(&typing, TypingFor::kCrew, "Crew, or who keeps the record", survey.crew, {}, kMostCrew);
     }
     if (ui.button("theme", next(), desk.dusk ? "Sun colours (light)" : "Dusk colours (dark)", {.align = Align::kLeft}))
       sink.send(SetDusk{!desk.dusk});

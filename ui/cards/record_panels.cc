@@ -20,7 +20,6 @@ constexpr std::array kGround = {NotDugReason::kStandingWater, NotDugReason::kSlo
 constexpr std::array kAccess = {NotDugReason::kNoPermission, NotDugReason::kUtility, NotDugReason::kHazard,
                                 NotDugReason::kStopWork, NotDugReason::kOther};
 constexpr int kColumns = 3;
-constexpr std::size_t kMostLabel = 40;
 
 bool warns(StopReason reason) {
   return reason == StopReason::kHumanRemainsStop || reason == StopReason::kUxoStop ||
@@ -138,7 +137,8 @@ void move_panel(Ui& ui, const PixelBox& box, const SurveyView& survey, RecordCar
           "Which pit was it really? Touch it on the map, or type its label.", {.lines = 2});
   if (ui.button("other", cut_top(&left, ui.mm(kTarget_mm), ui.mm(kGap_mm)),
                 state.move_to.empty() ? "Type the label" : "It was " + state.move_to, {.shorten = true})) {
-    begin_typing(&typing, TypingFor::kMoveTo, "The record of " + pit + " belongs to", state.move_to, {}, kMostLabel);
+    begin_typing(&typing, TypingFor::kMoveTo, "The record of " + pit + " belongs to", state.move_to, {},
+                 kLongestFreeLabel);
   }
   if (ui.button("why", cut_top(&left, ui.mm(kTarget_mm), ui.mm(kGap_mm)), why.empty() ? "Say why" : "Why: " + why,
                 {.shorten = true})) {

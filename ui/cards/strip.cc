@@ -3,6 +3,7 @@
 #include <array>
 #include <string>
 
+#include "base/text.h"
 #include "desk/words.h"
 
 namespace nearpit::ui {

@@ -3,6 +3,8 @@
 #include <algorithm>
 #include <utility>
 
+#include "base/text.h"
+
 namespace nearpit::ui {
 namespace {
 
@@ -15,9 +17,7 @@ void typed_line(Ui& ui, const PixelBox& box, const TextLine& line) {
   const std::string after = line.text.substr(line.caret);
   const float room = inside.width() * (after.empty() ? 1.0F : 0.7F);
   while (!before.empty() && ui.text_width(before, TextSize::kBase) > room) {
-    before.erase(0, 1);
-    while (!before.empty() && (static_cast<unsigned char>(before.front()) & 0xC0U) == 0x80U)
-      before.erase(0, 1);
+    before.erase(0, character_after(before, 0));
   }
   const float caret = inside.left + ui.text_width(before, TextSize::kBase);
   ui.text(inside, before + after, {.tone = Tone::kOnMap, .shorten = true});

@@ -18,8 +18,6 @@ std::string absolute_path(const std::string& path) {
   return failed ? path : whole.lexically_normal().string();
 }
 
-std::string one_text(const Error& error) { return error.one_line(); }
-
 }  // namespace
 
 Desk::Desk(Environment& environment)
@@ -49,7 +47,7 @@ std::int64_t Desk::ms_to_midnight() const {
   return kDay_ms - of_day;
 }
 
-void Desk::say(const Error& error) { view_.notice = {NoticeKind::kSays, one_text(error), {}}; }
+void Desk::say(const Error& error) { view_.notice = {NoticeKind::kSays, error.one_line(), {}}; }
 
 WallTime Desk::now() const {
   const WallTime wall = environment_.clock->now();
@@ -63,7 +61,7 @@ void Desk::keep_preferences() {
   const Status kept = preference_file_.write(preferences_);
   if (!kept) {
     view_.notice = {
-        NoticeKind::kSays, "What this window remembers of you could not be kept: " + one_text(kept.error()), {}};
+        NoticeKind::kSays, "What this window remembers of you could not be kept: " + kept.error().one_line(), {}};
   }
 }
 
@@ -169,7 +167,7 @@ void Desk::read_drafts() {
 bool Desk::told(const Status& kept) {
   if (!kept && !drafts_refused_ && !view_.notice.to_be_read()) {
     view_.notice = {NoticeKind::kSays,
-                    "What is half typed can't be kept on this disk (a crash would lose it): " + one_text(kept.error()),
+                    "What is half typed can't be kept on this disk (a crash would lose it): " + kept.error().one_line(),
                     {}};
   }
   drafts_refused_ = !kept;
@@ -218,9 +216,7 @@ void Desk::draft_changed() {
   if (!view.draft) return;
   view.missing = missing(*view.draft, session_->model());
   view.blanks = blanks(*view.draft, session_->model(), view.crew);
-  RecordDraft beside_why = *view.draft;
-  beside_why.why.clear();
-  view.typed = typed_anything(beside_why, session_->model());
+  view.typed = typed_beside_why(*view.draft, session_->model());
 }
 
 void Desk::carry_out_one(const KeepDraft& request) {
@@ -275,7 +271,7 @@ void Desk::carry_out_one(const GridPitsFirst& request) {
 
 void Desk::carry_out_one(const SetCrew& request) {
   if (!session_) return;
-  if (!request.name.empty() && !is_name(request.name, 200)) {
+  if (!request.name.empty() && !is_name(request.name, kMostCrew)) {
     view_.notice = {
         NoticeKind::kSays, in_quotes(request.name) + " can't be a crew's name; legal: 1 to 200 characters", {}};
     return;
@@ -317,7 +313,7 @@ void Desk::write(const Action& action, const std::string& label, const std::stri
   const RecordDraft draft = *view_.survey->draft;
   const auto applied = session_->apply({action}, [&](const SurveyModel& model) { return not_overtaken(draft, model); });
   if (!applied) {
-    refuse(label, one_text(applied.error()));
+    refuse(label, applied.error().one_line());
     others_wrote();
     return;
   }
@@ -325,7 +321,8 @@ void Desk::write(const Action& action, const std::string& label, const std::stri
   if (view_.survey->refused == label) view_.survey->refused.clear();
   // That the copy of what was typed can't be removed is told the next time; the record is on the disk.
   static_cast<void>(book_->forget(label));
-  put_draft_away();
+  view_.survey->draft.reset();
+  view_.survey->recorded_pit.reset();
   view_.card = CardKind::kDigList;
   const auto name = session_->model().name_of(label);
   survey_changed();
@@ -353,7 +350,7 @@ void Desk::carry_out_one(const SaveRecord&) {
   const RecordDraft draft = *view_.survey->draft;
   const auto action = action_of(draft, session_->model(), view_.survey->crew, now());
   if (!action) {
-    refuse(draft.pit, one_text(action.error()));
+    refuse(draft.pit, action.error().one_line());
     return;
   }
   write(*action, draft.pit, draft.amends ? " changed" : "");
@@ -502,25 +499,15 @@ void Desk::propose() {
   }
   if (!view.proposed) return;
   walk_to_ = view.proposed->stop.node;
-  // The walk to it begins where the crew dug last.
-  if (const auto last = last_dug(session_->model(), view.crew)) {
-    DigStop stop = view.proposed->stop;
-    stop.distance_m = distance_m(last->place, stop.place);
-    stop.bearing_deg = bearing_deg(last->place, stop.place);
-    const bool half_written = view.proposed->half_written;
-    view.proposed = due_row(stop);
-    view.proposed->half_written = half_written;
-    view.walk_from = last->label;
-    view.walk_from_place = last->place;
-  } else {
-    const Point origin = survey().ground().frame.lattice().origin;
-    DigStop stop = view.proposed->stop;
-    stop.distance_m = distance_m(origin, stop.place);
-    stop.bearing_deg = bearing_deg(origin, stop.place);
-    view.proposed = due_row(stop);
-    view.walk_from = "";
-    view.walk_from_place.reset();
-  }
+  // The walk to it begins where the crew dug last, else at the grid's origin.
+  const auto last = last_dug(session_->model(), view.crew);
+  view.walk_from = last ? last->label : "";
+  view.walk_from_place = last ? std::optional<Point>(last->place) : std::nullopt;
+  const Point from = last ? last->place : survey().ground().frame.lattice().origin;
+  DigStop stop = view.proposed->stop;
+  stop.distance_m = distance_m(from, stop.place);
+  stop.bearing_deg = bearing_deg(from, stop.place);
+  view.proposed = due_row(stop);
 }
 
 ChosenPit Desk::chosen_pit(const PitName& name) {

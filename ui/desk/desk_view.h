@@ -53,6 +53,8 @@ struct DueRow {
   std::string walk;     // "20 m, 045°" from the stop before
   std::string ring;     // "", "one step out"
   bool half_written = false;
+  // "next to T3-4, one step out"
+  std::string why() const { return ring.empty() ? because : because + ", " + ring; }
 };
 
 // A survey that is open.

@@ -6,10 +6,7 @@
 namespace nearpit::ui {
 
 bool overtaken_draft(RecordDraft* draft, const SurveyModel& model) {
-  if (!catch_up(draft, model)) return false;
-  RecordDraft rest = *draft;
-  rest.why.clear();
-  return typed_anything(rest, model);
+  return catch_up(draft, model) && typed_beside_why(*draft, model);
 }
 
 bool DraftBook::read(const SurveyModel& model) {
@@ -17,9 +14,7 @@ bool DraftBook::read(const SurveyModel& model) {
   for (RecordDraft& draft : file_.read()) {
     touched_.insert(draft.pit);
     const bool changed = overtaken_draft(&draft, model);
-    RecordDraft rest = draft;
-    rest.why.clear();
-    if (!changed && !typed_anything(rest, model)) continue;
+    if (!typed_beside_why(draft, model)) continue;
     overtaken = overtaken || changed;
     drafts_[draft.pit] = std::move(draft);
   }

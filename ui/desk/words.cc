@@ -79,10 +79,6 @@ std::string state_in_words(const PitMark& mark) {
   return text;
 }
 
-std::string counted(std::size_t number, const std::string& one, const std::string& many) {
-  return std::to_string(number) + " " + (number == 1 ? one : many);
-}
-
 std::string metres(double distance_m) {
   if (distance_m >= 999.5) return format_trimmed(distance_m / 1000, 2) + " km";
   return format_trimmed(distance_m, distance_m < 10 ? 1 : 0) + " m";

@@ -17,8 +17,6 @@ std::string in_words(NotDugReason reason);  // "standing water"
 std::string in_words(StopReason reason);    // "sterile subsoil"
 // "to dig", "positive", "not dug"; "on the grid, not called for" for a plain node.
 std::string state_in_words(const PitMark& mark);
-// "1 pit", "3 pits".
-std::string counted(std::size_t number, const std::string& one, const std::string& many);
 // "20 m", "3.5 m", "1.25 km".
 std::string metres(double distance_m);
 // "045°", from grid north.

@@ -10,6 +10,7 @@
 #include "field_map/hatch.h"
 #include "field_map/map_pick.h"
 #include "field_map/scale_bar.h"
+#include "widgets/packed_colour.h"
 #include "widgets/paged_list.h"
 
 namespace nearpit::ui {
@@ -30,8 +31,6 @@ constexpr double kHatch_mm = 3;
 constexpr double kHistory_mm = 40;
 constexpr double kSideBySide_mm = 80;
 constexpr double kButtons_mm = 4 * kTarget_mm + 5 * kGap_mm;  // the column of four, and what lies above and below it
-
-ImU32 packed(const Colour& colour) { return IM_COL32(colour.red, colour.green, colour.blue, colour.alpha); }
 
 // One frame's map.
 struct Map {

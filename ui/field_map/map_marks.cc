@@ -36,27 +36,6 @@ Mark recorded_mark(const PitRecord& record, const PositiveRule& rule) {
   return rule.positive(record) ? Mark::kPositive : Mark::kNegative;
 }
 
-bool near_stop_work(const Survey& survey, const Point& place) {
-  const auto& stops = survey.stop_works();
-  return std::any_of(stops.begin(), stops.end(), [&](const auto& named) {
-    const StopWork& stop = named.second;
-    return !stop.lifted && distance_m(stop.place, place) <= stop.distance_m;
-  });
-}
-
-// As Survey::asked(), of one node: pits open one another both ways.
-bool asked_for(const Survey& survey, NodeId id) {
-  const DigList& list = survey.dig_list();
-  if (list.in_design(id) || list.closed(id)) return false;
-  bool asked = false;
-  survey.ground().each_opened(id, [&](NodeId other) {
-    if (asked || list.in_design(other) || list.state(other) != PitState::kPositive) return;
-    const PitEntry* entry = survey.pit(other);
-    asked = entry && entry->record().opens_neighbours;
-  });
-  return asked;
-}
-
 void fill_unrecorded(const Survey& survey, PitMark* pit) {
   const DigList& list = survey.dig_list();
   if (list.halted(pit->node)) {
@@ -65,9 +44,9 @@ void fill_unrecorded(const Survey& survey, PitMark* pit) {
     pit->mark = Mark::kDue;
   } else if (list.in_design(pit->node)) {
     pit->mark = Mark::kNotDug;
-  } else if (asked_for(survey, pit->node)) {
+  } else if (survey.asked_for(pit->node)) {
     pit->asked = true;
-    pit->mark = near_stop_work(survey, pit->place) ? Mark::kHalted : Mark::kDue;
+    pit->mark = list.near_stop_work(pit->node) ? Mark::kHalted : Mark::kDue;
   }
 }
 

@@ -7,6 +7,8 @@
 #include <cmath>
 #include <vector>
 
+#include "base/text.h"
+
 namespace nearpit::ui {
 namespace {
 
@@ -27,25 +29,6 @@ bool in_ranges(char32_t character, const ImWchar* ranges) {
     if (character >= range[0] && character <= range[1]) return true;
   }
   return false;
-}
-
-// Next code point of text; moves *at on. Stray bytes count as one character.
-char32_t next_character(std::string_view text, std::size_t* at) {
-  const auto byte = [&](std::size_t i) { return static_cast<unsigned char>(text[i]); };
-  const unsigned char first = byte(*at);
-  std::size_t length = 1;
-  if (first >= 0xF0)
-    length = 4;
-  else if (first >= 0xE0)
-    length = 3;
-  else if (first >= 0xC0)
-    length = 2;
-  length = std::min(length, text.size() - *at);
-  char32_t value = length == 1 ? first : first & (0xFFU >> (length + 1));
-  for (std::size_t i = 1; i < length; ++i)
-    value = value << 6 | (byte(*at + i) & 0x3FU);
-  *at += length;
-  return value;
 }
 
 std::vector<ImWchar> as_ranges(const std::set<char32_t>& characters) {
@@ -157,8 +140,7 @@ const MarkImage& Fonts::mark(MarkShape shape, float size_px) const {
 
 bool Fonts::want(std::string_view text, TextSize size) {
   bool found = false;
-  for (std::size_t at = 0; at < text.size();) {
-    const char32_t character = next_character(text, &at);
+  for (const char32_t character : characters(text)) {
     if (character < 0x80 || character > kLastOfPlane) continue;
     if (in_ranges(character, kRanges)) {
       const bool lacks = size == TextSize::kLarge && sans_ && !in_ranges(character, kLargeRanges);

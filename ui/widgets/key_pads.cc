@@ -4,6 +4,8 @@
 #include <string>
 #include <string_view>
 
+#include "base/text.h"
+
 namespace nearpit::ui {
 namespace {
 
@@ -13,11 +15,6 @@ constexpr std::array<std::u32string_view, 4> kCapitals = {U"1234567890", U"QWERT
 constexpr std::array<std::u32string_view, 4> kSigns = {U"\u00E4\u00E5\u00E6\u00E7\u00E9\u00E8\u00F1\u00F6\u00F8\u00FC",
                                                        U"\u00C4\u00C5\u00C6\u00C7\u00C9\u00C8\u00D1\u00D6\u00D8\u00DC",
                                                        U"+-=/()%&#\u00DF", U":;?!\"\u00B0\u00D7@_*"};
-
-std::string utf8_of(char32_t character) {
-  if (character < 0x80) return {static_cast<char>(character)};
-  return {static_cast<char>(0xC0U | character >> 6), static_cast<char>(0x80U | (character & 0x3FU))};
-}
 
 bool number_key(Ui& ui, const PixelBox& box, const std::string& name, const std::string& label) {
   return ui.button(name, box, label, {.size = label.size() == 1 ? TextSize::kLarge : TextSize::kSmall});
@@ -55,7 +52,7 @@ Struck letter_pad(Ui& ui, const PixelBox& box, LetterPadState* state) {
       const char32_t letter = page[static_cast<std::size_t>(row)][static_cast<std::size_t>(column)];
       if (letter == U'^') {
         if (ui.button("capitals", cell, "Aa", {.chosen = state->capitals})) state->capitals = !state->capitals;
-      } else if (ui.button(utf8_of(letter), cell, utf8_of(letter), {.size = TextSize::kLarge})) {
+      } else if (ui.button(utf8(letter), cell, utf8(letter), {.size = TextSize::kLarge})) {
         struck = letter;
         state->capitals = false;
       }

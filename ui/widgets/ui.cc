@@ -7,6 +7,9 @@
 #include <cmath>
 #include <utility>
 
+#include "base/text.h"
+#include "widgets/packed_colour.h"
+
 namespace nearpit::ui {
 namespace {
 
@@ -16,18 +19,10 @@ constexpr double kRing_mm = 0.8;
 constexpr double kTextInset_mm = 1;
 constexpr double kDragStart_mm = 3;
 
-ImU32 packed(const Colour& colour) { return IM_COL32(colour.red, colour.green, colour.blue, colour.alpha); }
 ImVec2 corner(const PixelBox& box) { return {box.left, box.top}; }
 ImVec2 far_corner(const PixelBox& box) { return {box.right, box.bottom}; }
 
 TextSize smaller(TextSize size) { return size == TextSize::kLarge ? TextSize::kBase : TextSize::kSmall; }
-
-// Where a text may be broken or shortened: never inside a character.
-std::size_t character_before(const std::string& text, std::size_t at) {
-  while (at > 0 && (static_cast<unsigned char>(text[at]) & 0xC0U) == 0x80U)
-    --at;
-  return at;
-}
 
 }  // namespace
 
@@ -80,28 +75,21 @@ void Ui::face(const PixelBox& box, const Surface& surface, const Press& press, b
     outline(box.inset(-mm(kRing_mm) / 2), theme_.focus, std::max(2.0F, mm(kRing_mm)), kCornerRadius_mm);
 }
 
-Surface Ui::surface_of(const ButtonLook& look) const {
-  if (look.chosen) return theme_.chosen;
-  if (look.warning) return theme_.warning;
-  if (look.kind == ButtonKind::kPrimary) return theme_.primary;
-  return look.kind == ButtonKind::kBare ? theme_.ground : theme_.key;
+Ui::Skin Ui::skin_of(const ButtonLook& look) const {
+  if (look.chosen) return {theme_.chosen, Tone::kOnChosen};
+  if (look.warning) return {theme_.warning, Tone::kOnWarning};
+  if (look.kind == ButtonKind::kPrimary) return {theme_.primary, Tone::kOnPrimary};
+  if (look.kind == ButtonKind::kBare) return {theme_.ground, Tone::kPlain};
+  return {theme_.key, Tone::kOnKey};
 }
 
 bool Ui::button(std::string_view name, const PixelBox& box, const std::string& label, const ButtonLook& look) {
   const Press pressed = press(name, box, label, look.chosen, look.least_mm);
   if (box.shared_with(clip_).empty()) return pressed.acted;
-  face(box, surface_of(look), pressed, look.kind != ButtonKind::kBare);
+  const Skin skin = skin_of(look);
+  face(box, skin.surface, pressed, look.kind != ButtonKind::kBare);
   const Part here(this, name);
-  TextLook text_look{look.size, look.align, Tone::kOnKey, look.lines, look.shorten};
-  if (look.chosen) {
-    text_look.tone = Tone::kOnChosen;
-  } else if (look.warning) {
-    text_look.tone = Tone::kOnWarning;
-  } else if (look.kind == ButtonKind::kPrimary) {
-    text_look.tone = Tone::kOnPrimary;
-  } else if (look.kind == ButtonKind::kBare) {
-    text_look.tone = Tone::kPlain;
-  }
+  TextLook text_look{look.size, look.align, skin.tone, look.lines, look.shorten};
   PixelBox inside = box.inset(mm(kTextInset_mm) / 2);
   inside.left += mm(look.align == Align::kLeft ? 2 * kTextInset_mm : kTextInset_mm) / 2;
   inside.right -= mm(kTextInset_mm) / 2;
@@ -185,7 +173,7 @@ std::string Ui::shortened(std::string text, float width, TextSize size) const {
   if (text_width(text, size) <= width) return text;
   const std::string dots = "\xE2\x80\xA6";
   while (!text.empty() && text_width(text + dots, size) > width)
-    text.resize(character_before(text, text.size() - 1));
+    text.resize(character_before(text, text.size()));
   return text + dots;
 }
 

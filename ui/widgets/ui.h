@@ -148,6 +148,10 @@ class Ui {
     PixelBox outer_clip;
     std::size_t first_widget;
   };
+  struct Skin {
+    const Surface& surface;
+    Tone tone;
+  };
   struct Press {
     bool acted = false;
     bool held = false;
@@ -158,7 +162,7 @@ class Ui {
   std::string area_path() const;
   Press press(std::string_view name, const PixelBox& box, const std::string& label, bool chosen, double least_mm);
   void face(const PixelBox& box, const Surface& surface, const Press& press, bool outlined);
-  Surface surface_of(const ButtonLook& look) const;
+  Skin skin_of(const ButtonLook& look) const;
   Colour ink(Tone tone) const;
   void draw_lines(const PixelBox& box, const std::vector<std::string>& lines, TextSize size, const TextLook& look);
   std::vector<std::string> wrapped(const std::string& text, float width, TextSize size) const;
